@@ -54,6 +54,7 @@ export default ts.config(
       'seeds/seed.ts',
       'tests/**',
       'vite.config.ts',
+      'tailwind.config.ts',
       'knexfile.ts',
       'server/platform/start-up/**',
     ],

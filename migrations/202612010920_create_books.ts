@@ -49,8 +49,10 @@ export async function up(knex: Knex): Promise<void> {
 
     create function books.check_entry() returns trigger language plpgsql as $$
     declare
-      wanted uuid := case when tg_table_name = 'entries' then new.id else new.entry_id end;
+      wanted uuid;
     begin
+      -- Two statements: a single expression would look for both columns in either table.
+      if tg_table_name = 'entries' then wanted := new.id; else wanted := new.entry_id; end if;
       if (select count(*) from books.lines where entry_id = wanted) < 2 then
         raise exception 'entry % has fewer than two lines', wanted using errcode = '23514', constraint = 'entry_has_lines';
       end if;

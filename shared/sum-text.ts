@@ -7,13 +7,16 @@ export type SumReading =
   | { kind: 'empty' }
   | { kind: 'unreadable' };
 
-const FULL_WIDTH_ZERO = 0xff10;
+/** How far the full-width signs of an East Asian keyboard stand from the plain ones. */
+const FULL_WIDTH_SHIFT = 0xfee0;
 
 function tidy(text: string): string {
   return text
-    .replace(/[\uff10-\uff19]/g, (digit) => String(digit.charCodeAt(0) - FULL_WIDTH_ZERO))
-    .replace(/[\u00a0\u2000-\u200b\u202f\ufeff]/g, ' ')
-    .replace(/[\u2019\u02bc\u00b4`]/g, "'")
+    .replace(/[\uff01-\uff5e]/g, (sign) => String.fromCharCode(sign.charCodeAt(0) - FULL_WIDTH_SHIFT))
+    .replace(/\uffe1/g, '£')
+    .replace(/[\u200b\u2060\ufeff]/g, '')
+    .replace(/[\u00a0\u2000-\u200a\u202f]/g, ' ')
+    .replace(/[\u2018\u2019\u02bc\u00b4`]/g, "'")
     .trim()
     .toLowerCase();
 }
@@ -21,36 +24,40 @@ function tidy(text: string): string {
 const fromDigits = (pounds: string, fraction = ''): Pence =>
   pence(Number(pounds || '0') * 100 + Number(fraction.padEnd(2, '0')));
 
-/** The number alone, without sign of currency: digits with points, commas, spaces or apostrophes. */
-function readNumber(text: string): SumReading {
-  const plain = text.replace(/(?<=\d)[' ](?=\d{3}(?!\d))/g, '');
-  let found = /^(\d{1,9})(?:\.(\d{1,2})?)?$/.exec(plain) ?? /^()\.(\d{1,2})$/.exec(plain);
-  if (found) return { kind: 'sum', pence: fromDigits(found[1] ?? '', found[2]) };
-  found = /^(\d{1,3}(?:,\d{3}){2,}|\d{1,3}(?:,\d{3})+(?=\.\d{2}$))(?:\.(\d{2}))?$/.exec(plain);
-  if (found) return { kind: 'sum', pence: fromDigits((found[1] ?? '').replaceAll(',', ''), found[2]) };
-  // 1.234,50: the comma can only be the pence.
-  found = /^(\d{1,3}(?:\.\d{3})+),(\d{2})$/.exec(plain);
-  if (found) return { kind: 'sum', pence: fromDigits((found[1] ?? '').replaceAll('.', ''), found[2]) };
-  // 1,000 is a thousand to everyone who writes pounds.
-  found = /^(\d{1,3}),(\d{3})$/.exec(plain);
-  if (found && found[1] !== '0') return { kind: 'sum', pence: fromDigits(`${found[1]}${found[2]}`) };
-  // 25,00 or 25,5: pence after a comma, or a slip for 2,500?
-  found = /^(\d{1,5}),(\d{1,2})$/.exec(plain);
-  if (found) return twoWays(fromDigits(found[1] ?? '', found[2]), fromDigits(`${found[1]}${found[2]}`));
-  // 1.000: one pound, or a thousand?
-  found = /^(\d{1,3})\.(\d{3})$/.exec(plain);
-  if (found) {
-    if (!/0$/.test(found[2] ?? '')) return { kind: 'unreadable' };
-    return twoWays(
-      fromDigits(found[1] ?? '', (found[2] ?? '').slice(0, 2)),
-      fromDigits(`${found[1]}${found[2]}`),
-    );
-  }
-  return { kind: 'unreadable' };
-}
+const sum = (pounds: string, fraction?: string): SumReading => ({
+  kind: 'sum',
+  pence: fromDigits(pounds, fraction),
+});
 
 function twoWays(one: Pence, other: Pence): SumReading {
   return one === other ? { kind: 'sum', pence: one } : { kind: 'two-ways', readings: [one, other] };
+}
+
+/** What everybody reads alike: 25, 25.5, .50, 1,000, 1,234,567.80 and 1.234,50. */
+function readPlain(text: string): SumReading | undefined {
+  const plain = /^(\d{1,9})(?:\.(\d{1,2})?)?$/.exec(text) ?? /^()\.(\d{1,2})$/.exec(text);
+  if (plain) return sum(plain[1] ?? '', plain[2]);
+  const commas = /^([1-9]\d{0,2}(?:,\d{3}){1,2})(?:\.(\d{1,2})?)?$/.exec(text);
+  if (commas) return sum((commas[1] ?? '').replaceAll(',', ''), commas[2]);
+  // 1.234,50: the comma can only be the pence.
+  const points = /^([1-9]\d{0,2}(?:\.\d{3}){1,2}),(\d{2})$/.exec(text);
+  return points ? sum((points[1] ?? '').replaceAll('.', ''), points[2]) : undefined;
+}
+
+/** The number alone, without sign of currency: digits with points, commas, spaces or apostrophes. */
+function readNumber(text: string): SumReading {
+  const together = text.replace(/(?<=\d)[' ](?=\d{3}(?!\d))/g, '');
+  const plain = readPlain(together);
+  if (plain) return plain;
+  // 25,00 or 25,5: pence after a comma, or a slip for 2,500?
+  const comma = /^(\d{1,5}),(\d{1,2})$/.exec(together);
+  if (comma)
+    return twoWays(fromDigits(comma[1] ?? '', comma[2]), fromDigits(`${comma[1] ?? ''}${comma[2] ?? ''}`));
+  // 1.000: one pound, or a thousand? Tenths of a penny are nobody's sum.
+  const point = /^(\d{1,3})\.(\d{2})0$/.exec(together);
+  if (point)
+    return twoWays(fromDigits(point[1] ?? '', point[2]), fromDigits(`${point[1] ?? ''}${point[2] ?? ''}0`));
+  return { kind: 'unreadable' };
 }
 
 /** Reads “£20”, “20 pounds”, “1,000.50”, “50p”, “20 gbp”. Signs, exponents and hexadecimal are unreadable. */
@@ -62,7 +69,6 @@ export function readSum(text: string): SumReading {
   const bare = tidied
     .replace(/^(?:£|gbp)\s*/, '')
     .replace(/\s*(?:£|gbp|pounds?|quid|sterling)(?:\s+sterling)?$/, '')
-    .replace(/\/?-$/, '')
-    .replace(/\.-?$/, (end) => (end === '.' ? '' : ''));
+    .replace(/(?<=\d)(?:[.,/]?-|\.)$/, '');
   return readNumber(bare.trim());
 }

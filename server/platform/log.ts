@@ -1,9 +1,9 @@
 // One log for all of the server: lines of JSON, without personal values or secrets.
-import { pino } from 'pino';
+import { pino, type Logger } from 'pino';
 
-export type Log = Pick<ReturnType<typeof pino>, 'debug' | 'info' | 'warn' | 'error'>;
+export type Log = Logger;
 
-export const createLog = (level: string) =>
+export const createLog = (level: string): Log =>
   pino({
     level,
     redact: [

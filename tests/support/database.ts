@@ -14,7 +14,8 @@ export type TestDatabase = {
 
 function required(name: string): string {
   const value = process.env[name];
-  if (!value) throw new Error(`${name} is not set: run the tests through \`npm test\` or \`npm run test:spec\``);
+  if (!value)
+    throw new Error(`${name} is not set: run the tests through \`npm test\` or \`npm run test:spec\``);
   return value;
 }
 

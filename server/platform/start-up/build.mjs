@@ -50,6 +50,7 @@ const COMMANDS = [
 ];
 
 export async function buildIfStale(project, { run, say, env = process.env }) {
+  if (isBuildCurrent(project)) return 'current';
   return preparing(project, async () => {
     const hash = hashSources(project);
     if (isBuildCurrent(project, hash)) return 'current';

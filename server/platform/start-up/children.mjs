@@ -32,7 +32,7 @@ function launch(spec, logs) {
   run.ended = new Promise((resolve) => {
     const finish = (end) => resolve((run.end ??= end));
     child.once('error', (error) => finish({ code: error.code, signal: null }));
-    child.once('close', (code, signal) => finish({ code, signal }));
+    child.once(spec.isCaptured ? 'close' : 'exit', (code, signal) => finish({ code, signal }));
   });
   return run;
 }
@@ -58,7 +58,7 @@ export async function stopLeftOvers(rosterFile) {
   } catch {
     // A half-written roster names nobody; the database's own lock file still guards the data.
   }
-  for (const child of noted) await stopNoted(child, child.stopSignal);
+  await Promise.all(noted.map((child) => stopNoted(child, child.stopSignal)));
   rmSync(rosterFile, { force: true });
   return noted.length;
 }
@@ -72,7 +72,8 @@ export function createCrew({ logs, rosterFile, say, onGivenUp }) {
   startFailure.catch(() => {});
 
   function writeRoster() {
-    const noted = [...runs].map(({ child, spec }) => ({
+    const begun = [...runs].filter(({ child }) => child.pid);
+    const noted = begun.map(({ child, spec }) => ({
       ...identify(child.pid),
       stopSignal: spec.stopSignal,
     }));
@@ -154,6 +155,7 @@ export function createCrew({ logs, rosterFile, say, onGivenUp }) {
     killAll,
     /** Waits for `work`, but not longer than every kept process lives. */
     whileAllLive: (work) => Promise.race([work, startFailure]),
+    isEmpty: () => runs.size === 0 && waiting.size === 0,
     started: () => void (phase = 'running'),
   };
 }

@@ -1,6 +1,6 @@
 // Puts in place what the project needs from outside: its locked packages, and Debian's where the machine lacks them.
 import { createHash } from 'node:crypto';
-import { existsSync, readFileSync, writeFileSync } from 'node:fs';
+import { existsSync, lstatSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { StartFault } from './faults.mjs';
 import { withLock } from './locks.mjs';
@@ -15,10 +15,19 @@ const readJson = (path) => JSON.parse(readFileSync(path, 'utf8'));
 /** Whether what npm says it installed has every package of the lock that this kind of machine takes. */
 export function agrees(locked, installed) {
   return Object.entries(locked.packages).every(([path, wanted]) => {
-    if (path === '') return true;
+    // npm ci leaves out what nobody asks for any more, though the lock may still list it.
+    if (path === '' || wanted.extraneous) return true;
     const found = installed.packages[path];
     return found ? found.version === wanted.version : Boolean(wanted.optional);
   });
+}
+
+/** npm ci empties the folder behind a link, which may be another project's. */
+function refuseLinkedPackages(project) {
+  if (!lstatSync(join(project, 'node_modules'), { throwIfNoEntry: false })?.isSymbolicLink()) return;
+  throw new StartFault(
+    'node_modules is a link to another folder and does not fit package-lock.json. Remove the link and start again.',
+  );
 }
 
 /** @returns {'missing' | 'stale' | 'current'} */
@@ -37,24 +46,23 @@ export const preparing = (project, work, onWait) =>
 
 /** `run` is given a command, its arguments and what to say when it fails. */
 export async function installPackages(project, { run, say, env = process.env }) {
+  // Nothing is written when nothing is to be done: the project may belong to another account.
+  if (packageState(project) === 'current') return 'in place';
+  refuseLinkedPackages(project);
   return preparing(project, async () => {
-    const state = packageState(project);
-    if (state !== 'current') {
-      say('installing the locked set, about a minute');
-      await run({
-        name: 'install',
-        command: 'npm',
-        args: ['ci', '--include=dev', '--no-fund', '--no-audit'],
-        cwd: project,
-        env,
-        refusal:
-          'The packages could not be installed. Is the network there? Try again with npm ci --include=dev.',
-      });
-    }
-    const hash = hashOf(lockPath(project));
-    const stamp = stampPath(project);
-    if (!existsSync(stamp) || readFileSync(stamp, 'utf8') !== hash) writeFileSync(stamp, hash);
-    return state === 'current' ? 'in place' : 'installed';
+    if (packageState(project) === 'current') return 'in place';
+    say('installing the locked set, about a minute');
+    await run({
+      name: 'install',
+      command: 'npm',
+      args: ['ci', '--include=dev', '--no-fund', '--no-audit'],
+      cwd: project,
+      env,
+      refusal:
+        'The packages could not be installed. Is the network there? Try again with npm ci --include=dev.',
+    });
+    writeFileSync(stampPath(project), hashOf(lockPath(project)));
+    return 'installed';
   });
 }
 

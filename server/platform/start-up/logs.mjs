@@ -1,6 +1,7 @@
 // The log file of each child: opened for appending, kept to a sane size, and its end read back when it dies.
 import { closeSync, existsSync, mkdirSync, openSync, readSync, renameSync, statSync } from 'node:fs';
 import { join } from 'node:path';
+import { stripVTControlCharacters } from 'node:util';
 
 const KEEP_BYTES = 10 * 1024 * 1024;
 const TAIL_BYTES = 8 * 1024;
@@ -25,5 +26,6 @@ export function lastLines(path, { from = 0, count = 20 } = {}) {
   const fd = openSync(path, 'r');
   readSync(fd, bytes, 0, bytes.length, start);
   closeSync(fd);
-  return bytes.toString('utf8').trimEnd().split('\n').slice(-count).join('\n');
+  // Tools write colour into their logs, which is noise wherever the end of a log is read back.
+  return stripVTControlCharacters(bytes.toString('utf8')).trimEnd().split('\n').slice(-count).join('\n');
 }

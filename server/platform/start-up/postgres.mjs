@@ -18,8 +18,6 @@ import { StartFault } from './faults.mjs';
 /** Nothing of the caller's PostgreSQL habits (PGDATA, PGOPTIONS, a locale that is not there) may leak in. */
 const cleanEnvironment = () => ({ PATH: process.env.PATH ?? '/usr/bin:/bin', LC_ALL: 'C.UTF-8', TZ: 'UTC' });
 
-const IN_THE_MAKING = '.treenail-being-made';
-
 function writePasswordFile(password, { uid, gid }) {
   const folder = mkdtempSync(join(tmpdir(), 'treenail-pw-'));
   const file = join(folder, 'password');
@@ -28,15 +26,8 @@ function writePasswordFile(password, { uid, gid }) {
   return { file, folder };
 }
 
-/** Makes the cluster unless it stands already. `marker` outlives a crash, so that half a cluster is made anew. */
-export async function makeCluster({
-  bin,
-  folder,
-  account,
-  password,
-  run,
-  marker = `${folder}${IN_THE_MAKING}`,
-}) {
+/** Makes the cluster unless it stands already. The `marker` file outlives a crash, so that half a cluster is made anew. */
+export async function makeCluster({ bin, folder, account, password, run, marker }) {
   if (existsSync(join(folder, 'PG_VERSION')) && !existsSync(marker)) return false;
   if (existsSync(marker))
     for (const name of readdirSync(folder)) rmSync(join(folder, name), { recursive: true });

@@ -6,10 +6,11 @@ import { StartFault } from './faults.mjs';
 const random = (bytes = 24) => randomBytes(bytes).toString('base64url');
 
 const DATABASE = { databaseSuperuser: random, databaseOwner: random, databaseApp: random };
+/** Marked as what they are, so that live mode can refuse one that was copied over. */
 const DEMONSTRATION = {
-  session: () => random(48),
+  session: () => `demonstration-${random(48)}`,
   paymentKey: () => `sk_test_${randomBytes(24).toString('hex')}`,
-  paymentWebhook: () => `whsec_${randomBytes(24).toString('hex')}`,
+  paymentWebhook: () => `whsec_demonstration_${randomBytes(24).toString('hex')}`,
 };
 
 function readSecrets(file) {

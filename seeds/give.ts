@@ -1,0 +1,39 @@
+// Gives one gift as a giver does: sheet, checkout, card page, return. Only the waiting is left out.
+import { z } from 'zod';
+import type { GiveForm } from '#shared/giving/give-schemas.ts';
+import type { Deps } from '#server/deps.ts';
+import { beginCheckout, makeToken, readOutcome, writeDraft } from '#server/giving/index.ts';
+
+const answerSchema = z.looseObject({});
+const SESSION_IN_URL = /(cs_[A-Za-z0-9_]+)/;
+
+export type Controls = { post(path: string, body?: object): Promise<void> };
+
+/** The controls of the payment stand-in; a refusal stops the generator with the stand-in's words. */
+export const openControls = (url: string): Controls => ({
+  async post(path, body = {}) {
+    const answer = await fetch(`${url}${path}`, {
+      method: 'POST',
+      headers: { 'Content-Type': 'application/json' },
+      body: JSON.stringify(body),
+    });
+    if (!answer.ok) throw new Error(`${path}: ${answer.status} ${await answer.text()}`);
+    answerSchema.parse(await answer.json());
+  },
+});
+
+export async function giveGift(
+  deps: Deps,
+  controls: Controls,
+  answers: GiveForm,
+  { comesBack }: { comesBack: boolean },
+): Promise<void> {
+  const token = makeToken();
+  await writeDraft(deps, token, answers, false);
+  const { url, intentId } = await beginCheckout(deps, token);
+  const sessionId = SESSION_IN_URL.exec(url)?.[1];
+  if (!sessionId) throw new Error(`no session in ${url}`);
+  await controls.post(`/sessions/${sessionId}/pay`);
+  // Some close the window after paying; then only the webhook tells.
+  if (comesBack) await readOutcome(deps, intentId);
+}

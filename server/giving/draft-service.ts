@@ -1,0 +1,76 @@
+// The sheet as it is filled in: what was typed is kept first, right or wrong, and judged afterwards.
+import { GIVE_FIELDS, giveRequestSchema, type GiveFormFilled } from '#shared/giving/give-schemas.ts';
+import { isFull } from '#shared/campaign/reach-rules.ts';
+import { fieldFaults, type FieldFaults } from '#shared/errors.ts';
+import type { Deps } from '#server/deps.ts';
+import { Invalid } from '#server/platform/errors.ts';
+import { getGivingSettings, isGiftAidOffered } from '#server/society/index.ts';
+import { keepDraft } from './draft-store.ts';
+import { readStanding, type Standing } from './standing.ts';
+
+/** Longer than any field may be, so that even a far too long answer comes back to be shortened. */
+const MOST_KEPT = 2_000;
+
+/** What was typed, as text, in the fields that the sheet has; anything else is not ours to keep. */
+export function typedAnswers(body: unknown): Record<string, string> {
+  if (typeof body !== 'object' || body === null) return {};
+  const typed: Record<string, string> = {};
+  for (const field of GIVE_FIELDS) {
+    const value: unknown = Object.getOwnPropertyDescriptor(body, field)?.value;
+    // PostgreSQL's json holds no NUL; the check of control characters still sees the rest.
+    if (typeof value === 'string') typed[field] = value.slice(0, MOST_KEPT).replaceAll('\u0000', '');
+  }
+  return typed;
+}
+
+type Rules = {
+  standing: Standing;
+  leastPence: Parameters<typeof giveRequestSchema>[0]['leastPence'];
+  isGiftAidOffered: boolean;
+};
+
+export async function readRules(deps: Deps): Promise<Rules> {
+  const now = deps.clock.now();
+  const [standing, settings, offered] = await Promise.all([
+    readStanding(deps.db),
+    getGivingSettings(deps.db, now),
+    isGiftAidOffered(deps.db, now),
+  ]);
+  return { standing, leastPence: settings.leastGiftPence, isGiftAidOffered: offered };
+}
+
+/** Every fault of the answers, or the answers checked; pure but for the rules it is given. */
+export function judgeAnswers(
+  body: unknown,
+  rules: Rules,
+): { answers: GiveFormFilled; faults?: never } | { faults: FieldFaults; answers?: never } {
+  const parsed = giveRequestSchema({ leastPence: rules.leastPence }).safeParse(body);
+  if (!parsed.success) return { faults: fieldFaults(parsed.error) };
+  const faults: FieldFaults = {};
+  const { towards, declare } = parsed.data;
+  if (towards !== 'whole') {
+    const part = rules.standing.parts.find((one) => one.slug === towards && one.topMm !== null);
+    if (!part) faults.towards = 'Choose the whole figure or one of the parts listed.';
+    else if (isFull(rules.standing.reach, towards))
+      faults.towards = `${part.name} is paid for now. Choose another part, or the whole figure.`;
+  }
+  if (declare === 'on' && !rules.isGiftAidOffered)
+    faults.declare = 'We cannot claim Gift Aid yet. Leave the box unticked.';
+  return Object.keys(faults).length > 0 ? { faults } : { answers: parsed.data };
+}
+
+/**
+ * Keeps what was typed and judges it, unless the giver only stepped away (`isQuiet`).
+ * @throws Invalid naming every wrong field; what was typed is kept all the same.
+ */
+export async function writeDraft(deps: Deps, token: string, body: unknown, isQuiet: boolean): Promise<void> {
+  const verdict = isQuiet ? undefined : judgeAnswers(body, await readRules(deps));
+  await deps.db.transaction((trx) =>
+    keepDraft(trx, token, {
+      answers: typedAnswers(body),
+      isComplete: verdict?.answers !== undefined,
+      at: deps.clock.now(),
+    }),
+  );
+  if (verdict?.faults) throw new Invalid(verdict.faults);
+}

@@ -1,0 +1,189 @@
+// What the giver's pages show: the sheet, the check before paying, and how it came out.
+import type { z } from 'zod';
+import { formatTime, dayOf } from '#shared/dates.ts';
+import { giftAidOn } from '#shared/declarations/gift-aid-rules.ts';
+import { DECLARATION_NOTICE } from '#shared/declarations/statutory-wording.ts';
+import {
+  chosenSum,
+  giveCheckSchema,
+  giveFormSchema,
+  giveOutcomeSchema,
+  giveSheetSchema,
+  type GiveCheck,
+  type GiveFormFilled,
+  type GiveOutcome,
+  type GiveSheet,
+} from '#shared/giving/give-schemas.ts';
+import { formatPence, NOTHING, subtract, type Pence } from '#shared/money.ts';
+import { sumInWords } from '#shared/sum-words.ts';
+import { getAppealWording } from '#server/campaign/index.ts';
+import type { Deps } from '#server/deps.ts';
+import { Conflict, NotFound } from '#server/platform/errors.ts';
+import { getGivingSettings, getWording } from '#server/society/index.ts';
+import { judgeAnswers, readRules } from './draft-service.ts';
+import { findDraft } from './draft-store.ts';
+import { findGiftIdOfIntent } from './gift-store.ts';
+import { findIntent, findPaidIntentSince, type GiftIntent } from './intent-store.ts';
+import { readReceipt, receiptNumber } from './receipt-reads.ts';
+import { fetchSession, settleSession } from './settle-session.ts';
+import type { Standing } from './standing.ts';
+
+const answersSchema = giveFormSchema.partial();
+type Prefill = { towards?: string | undefined; amount?: string | undefined; other?: string | undefined };
+
+const openParts = (standing: Standing) =>
+  standing.parts.flatMap((part) => {
+    const reached = standing.reach.parts.find((one) => one.slug === part.slug);
+    const isOpen = part.topMm !== null && reached && !reached.isPaid;
+    return isOpen ? [{ slug: part.slug, name: part.name, stillNeededPence: reached.stillNeededPence }] : [];
+  });
+
+/** What was typed before, where it still parses field by field, with what the address asks for on top. */
+function typedBefore(kept: Record<string, string>, prefill: Prefill): z.output<typeof answersSchema> {
+  const answers: Record<string, string> = {};
+  for (const [field, value] of Object.entries({ ...kept, ...definedOnly(prefill) })) answers[field] = value;
+  return answersSchema.catch({}).parse(answers);
+}
+const definedOnly = (prefill: Prefill): Record<string, string> =>
+  Object.fromEntries(
+    Object.entries(prefill).filter((pair): pair is [string, string] => typeof pair[1] === 'string'),
+  );
+
+const stillNeeded = (standing: Standing): Pence =>
+  standing.reach.parts.reduce(
+    (sum, part) => subtract(sum, subtract(NOTHING, part.stillNeededPence)),
+    NOTHING,
+  );
+
+export async function readSheet(deps: Deps, token: string | undefined, prefill: Prefill): Promise<GiveSheet> {
+  const now = deps.clock.now();
+  const rules = await readRules(deps);
+  const [draft, consent, wording] = await Promise.all([
+    findDraft(deps.db, token),
+    getWording(deps.db, 'consent', now),
+    getAppealWording(deps.db, rules.standing.campaign.id, now),
+  ]);
+  const giftAid = rules.isGiftAidOffered
+    ? { wording: (await getWording(deps.db, 'declaration', now)).words, notice: DECLARATION_NOTICE }
+    : null;
+  return giveSheetSchema.parse({
+    campaignName: rules.standing.campaign.name,
+    pronoun: rules.standing.campaign.pronoun,
+    leastPence: rules.leastPence,
+    stillNeededPence: stillNeeded(rules.standing),
+    openParts: openParts(rules.standing),
+    partChoice: wording.partChoice,
+    giftAid,
+    consentWording: consent.words,
+    answers: typedBefore(draft?.answers ?? {}, prefill),
+  });
+}
+
+async function saidBack(deps: Deps, draftId: string, sum: Pence): Promise<string[]> {
+  const now = deps.clock.now();
+  const settings = await getGivingSettings(deps.db, now);
+  const said: string[] = [];
+  if (sum >= settings.largeGiftPence)
+    said.push(
+      `This is a large gift: ${formatPence(sum)}, in words ${sumInWords(sum)}. If that is right, thank you; pay when you are ready.`,
+    );
+  const since = new Date(now.getTime() - settings.repeatedWithinMinutes * 60_000);
+  const before = await findPaidIntentSince(deps.db, draftId, sum, since);
+  if (before)
+    said.push(
+      `You gave ${formatPence(sum)} (${sumInWords(sum)}) from here at ${formatTime(before.createdAt)}. Paying now makes a second gift.`,
+    );
+  return said;
+}
+
+function towardsOf(standing: Standing, answers: GiveFormFilled): GiveCheck['towards'] {
+  const part = openParts(standing).find((one) => one.slug === answers.towards);
+  return (
+    part ?? {
+      slug: null,
+      name: 'The whole figure, from the ground up',
+      stillNeededPence: stillNeeded(standing),
+    }
+  );
+}
+
+/** @throws Conflict `no-draft` or `incomplete` */
+export async function readCheck(deps: Deps, token: string | undefined): Promise<GiveCheck> {
+  const draft = await findDraft(deps.db, token);
+  if (!draft || Object.keys(draft.answers).length === 0)
+    throw new Conflict('There is nothing to check yet.', 'no-draft');
+  const rules = await readRules(deps);
+  const verdict = judgeAnswers(draft.answers, rules);
+  if (verdict.faults) throw new Conflict('Some answers need putting right first.', 'incomplete');
+  const sum = chosenSum(verdict.answers, { leastPence: rules.leastPence });
+  if ('fault' in sum) throw new Conflict(sum.fault, 'incomplete');
+  const now = deps.clock.now();
+  const wording = await getAppealWording(deps.db, rules.standing.campaign.id, now);
+  const isDeclared = verdict.answers.declare === 'on';
+  return giveCheckSchema.parse({
+    campaignName: rules.standing.campaign.name,
+    pronoun: rules.standing.campaign.pronoun,
+    sumPence: sum.pence,
+    giftAidPence: isDeclared ? giftAidOn(sum.pence, dayOf(now)) : NOTHING,
+    isDeclared,
+    towards: towardsOf(rules.standing, verdict.answers),
+    answers: verdict.answers,
+    saidBack: await saidBack(deps, draft.id, sum.pence),
+    appealVersion: wording.version,
+    onShortfall: wording.onShortfall,
+    onSurplus: wording.onSurplus,
+  });
+}
+
+/** Asks the payment service itself while we do not yet know, so that the page never waits for a webhook. */
+async function bringUpToDate(deps: Deps, intent: GiftIntent): Promise<GiftIntent> {
+  if (!intent.sessionId || !['asked', 'confirming', 'started'].includes(intent.state)) return intent;
+  try {
+    await settleSession(deps, intent, await fetchSession(deps, intent.sessionId));
+  } catch (error) {
+    deps.log.warn(
+      { err: error, intentId: intent.id },
+      'the payment could not be looked up for the return page',
+    );
+  }
+  return (await findIntent(deps.db, intent.id)) ?? intent;
+}
+
+const OUTCOME_OF: Record<GiftIntent['state'], GiveOutcome['outcome']> = {
+  started: 'not-paid',
+  asked: 'not-paid',
+  confirming: 'confirming',
+  // Paid, but not as asked: a person looks at it before we say more.
+  mismatched: 'confirming',
+  paid: 'paid',
+  expired: 'not-paid',
+  failed: 'not-paid',
+};
+
+export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOutcome> {
+  const found = await findIntent(deps.db, intentId);
+  if (!found) throw new NotFound('We know of no gift at this address.');
+  const intent = await bringUpToDate(deps, found);
+  const { standing } = await readRules(deps);
+  const giftId = await findGiftIdOfIntent(deps.db, intent.id);
+  const receipt = giftId ? await readReceipt(deps.db, giftId) : null;
+  const gift = giftId
+    ? await deps
+        .db('gifts')
+        .where({ id: giftId })
+        .first<{ receipt_token: string; number: number }>('receipt_token', 'number')
+    : undefined;
+  return giveOutcomeSchema.parse({
+    outcome: receipt ? 'paid' : OUTCOME_OF[intent.state],
+    campaignName: standing.campaign.name,
+    pronoun: standing.campaign.pronoun,
+    sumPence: intent.amountPence,
+    giftAidPence: receipt?.declaration?.giftAidPence ?? NOTHING,
+    shares: receipt?.shares ?? [],
+    splitNote: receipt?.splitNote ?? null,
+    email: receipt ? intent.answers.email : null,
+    receiptNumber: gift ? receiptNumber(gift.number) : null,
+    receiptPath: gift ? `/receipts/${gift.receipt_token}` : null,
+    inMemory: intent.answers.dedication === 'memory',
+  });
+}

@@ -1,0 +1,141 @@
+// Says in words what is owed to whom, how long it has waited and what is to be done. Pure.
+import { addDays, dayOf, daysBetween, formatMoment, formatTime, type Day } from '#shared/dates.ts';
+import { WORDS_KIND_WORDS } from '#shared/giving/desk-words.ts';
+import { formatPence } from '#shared/money.ts';
+import type { OwedRow } from '#shared/today/today-schemas.ts';
+import type { HangingEvent, HangingIntent, LetterSubject, UnreadWords } from '#server/giving/index.ts';
+import type { MailLine } from '#server/platform/mail/index.ts';
+import type { FailedCheck } from './check-reads.ts';
+
+/** Words from the public are read within this many days. */
+const WORDS_WITHIN_DAYS = 3;
+const LETTER_WITHIN_DAYS = 1;
+
+type Wait = Pick<OwedRow, 'due' | 'dueDay' | 'since' | 'waitedDays' | 'waited'>;
+
+/** How long it has waited by London days, and whether the day it was due by is past. */
+export function tellWait(since: Date, now: Date, withinDays: number): Wait {
+  const [from, today] = [dayOf(since), dayOf(now)];
+  const waitedDays = Math.max(0, daysBetween(from, today));
+  const promisedBy: Day = addDays(from, withinDays);
+  const isLate = promisedBy < today;
+  return {
+    due: isLate ? 'late' : 'today',
+    dueDay: isLate ? promisedBy : today,
+    since: since.toISOString(),
+    waitedDays,
+    waited:
+      waitedDays === 0 ? `since ${formatTime(since)}` : waitedDays === 1 ? '1 day' : `${waitedDays} days`,
+  };
+}
+
+const giftPath = (number: number, place: string): string => `/desk/gifts/${number}#${place}`;
+
+function whatWords(words: UnreadWords): string {
+  if (words.words === null)
+    return `Words ${WORDS_KIND_WORDS[words.kind]} with gift ${words.giftNumber}: the treasurer reads them`;
+  const told = words.hasContact ? ' The family is told once they are passed.' : '';
+  return `Words to read, ${WORDS_KIND_WORDS[words.kind]}: “${words.words}”.${told}`;
+}
+
+export function wordsRow(words: UnreadWords, now: Date, mayJudge: boolean): OwedRow {
+  const isReadable = words.words !== null;
+  return {
+    id: `words-${words.id}`,
+    ...tellWait(words.writtenAt, now, WORDS_WITHIN_DAYS),
+    what: whatWords(words),
+    owedTo: words.hasContact && isReadable ? `${words.giver} and the family` : words.giver,
+    detail: [],
+    action:
+      mayJudge && words.words !== null
+        ? {
+            kind: 'judge',
+            giftNumber: words.giftNumber,
+            wordsId: words.id,
+            wordsKind: words.kind,
+            words: words.words,
+          }
+        : { kind: 'open', label: `See gift ${words.giftNumber}`, path: giftPath(words.giftNumber, 'words') },
+  };
+}
+
+const MAIL_FAULTS: Record<string, string> = {
+  hard_failed: 'came back',
+  uncertain: 'may or may not have gone',
+  soft_failed: 'is put off again and again by the mail server',
+  queued: 'has not been sent: the worker may be standing still',
+  claimed: 'has not been sent: the worker may be standing still',
+};
+
+export function mailRow(mail: MailLine, about: LetterSubject | undefined, now: Date): OwedRow {
+  const fault = MAIL_FAULTS[mail.state] ?? 'has not gone';
+  const isThanks = mail.kind === 'gift-thanks';
+  const name = isThanks ? 'The thank-you' : 'A letter';
+  const of = about ? ` for ${formatPence(about.sumPence)}, gift ${about.giftNumber},` : '';
+  const action: OwedRow['action'] = about
+    ? { kind: 'open', label: 'Decide', path: giftPath(about.giftNumber, 'letters') }
+    : { kind: 'look', label: 'See more' };
+  return {
+    id: `mail-${mail.id}`,
+    ...tellWait(mail.createdAt, now, LETTER_WITHIN_DAYS),
+    what: `${name}${of} ${fault}`,
+    owedTo: about ? (isThanks ? about.giver : 'the family') : 'the reader of the letter',
+    detail: about ? [] : [`Letter of the kind “${mail.kind}”`, `Tried ${mail.tries} times`],
+    action,
+  };
+}
+
+const INTENT_WORDS: Record<HangingIntent['state'], string> = {
+  started: 'was asked for, but no card page was opened',
+  asked: 'stands at the card page',
+  confirming: 'is still being confirmed by the bank',
+  mismatched: 'does not agree with what was asked for: nothing was posted',
+};
+
+export function intentRow(intent: HangingIntent, now: Date): OwedRow {
+  return {
+    id: `payment-${intent.id}`,
+    ...tellWait(intent.since, now, intent.state === 'mismatched' ? 0 : 1),
+    what: `A payment of ${formatPence(intent.sumPence)} ${INTENT_WORDS[intent.state]}`,
+    owedTo: intent.state === 'mismatched' ? 'the giver and the books' : 'the books',
+    detail: [
+      `Begun ${formatMoment(intent.since)}, reference ${intent.id}`,
+      ...(intent.sessionId ? [`Card page ${intent.sessionId}`] : []),
+      ...(intent.checkedAt ? [`Last asked of the card service ${formatMoment(intent.checkedAt)}`] : []),
+      ...(intent.fault ? [`Found: ${intent.fault}`] : []),
+    ],
+    action: { kind: 'look', label: 'See more' },
+  };
+}
+
+export function eventRow(event: HangingEvent, now: Date): OwedRow {
+  const stands = event.state === 'refused' ? 'was refused' : 'has not been worked';
+  return {
+    id: `event-${event.id}`,
+    ...tellWait(event.since, now, 0),
+    what: `What the card service told ${stands}: ${event.type}`,
+    owedTo: 'the books',
+    detail: [
+      `Event ${event.id} of ${event.objectId}, come ${formatMoment(event.since)}`,
+      `Tried ${event.tries} times`,
+      ...(event.fault ? [event.fault] : []),
+    ],
+    action: { kind: 'look', label: 'See more' },
+  };
+}
+
+export function checkRow(check: FailedCheck, now: Date): OwedRow {
+  const name = check.name.replaceAll('_', ' ');
+  const count = check.faults === 1 ? '1 fault' : `${check.faults} faults`;
+  return {
+    id: `check-${check.name}`,
+    ...tellWait(check.ranAt, now, 0),
+    what:
+      check.faults > 0
+        ? `The nightly check “${name}” found ${count}`
+        : `The nightly check “${name}” has not run since ${formatMoment(check.ranAt)}`,
+    owedTo: 'the books',
+    detail: check.detail,
+    action: { kind: 'look', label: 'See more' },
+  };
+}

@@ -1,0 +1,66 @@
+// Asks the lower rooms what each is owed and puts it in one list, soonest first, for one person.
+import type { OwedRow, Today } from '#shared/today/today-schemas.ts';
+import { dayOf } from '#shared/dates.ts';
+import {
+  GIFT_ROLES,
+  listGiftHistory,
+  listHangingPayments,
+  listLetterSubjects,
+  listUnreadWords,
+  mayAct,
+  type Reader,
+} from '#server/giving/index.ts';
+import type { Db } from '#server/platform/db.ts';
+import { listOwedMail } from '#server/platform/mail/index.ts';
+import { listFailedChecks } from './check-reads.ts';
+import { checkRow, eventRow, intentRow, mailRow, wordsRow } from './owed-rows.ts';
+
+const HISTORY_MS = 24 * 60 * 60_000;
+const HISTORY_LINES = 12;
+
+const mayReadGifts = (person: Reader): boolean =>
+  person.roles.some((role) => GIFT_ROLES.some((one) => one === role));
+
+async function owedLetters(db: Db, person: Reader, now: Date): Promise<OwedRow[]> {
+  const mails = await listOwedMail(db, now);
+  const subjects = await listLetterSubjects(db, [...new Set(mails.map((mail) => mail.subjectId))], person);
+  return mails.map((mail) =>
+    mailRow(
+      mail,
+      subjects.find((one) => one.subjectId === mail.subjectId),
+      now,
+    ),
+  );
+}
+
+const soonestFirst = (one: OwedRow, other: OwedRow): number =>
+  one.dueDay.localeCompare(other.dueDay) ||
+  one.since.localeCompare(other.since) ||
+  one.id.localeCompare(other.id);
+
+/** Nothing of gifts for those who do not read gifts. */
+export async function listOwed(db: Db, person: Reader, now: Date): Promise<OwedRow[]> {
+  if (!mayReadGifts(person)) return [];
+  const [words, payments, letters, checks] = await Promise.all([
+    listUnreadWords(db, person),
+    listHangingPayments(db, now),
+    owedLetters(db, person, now),
+    listFailedChecks(db, now),
+  ]);
+  return [
+    ...words.map((one) => wordsRow(one, now, mayAct(person, one.isWithheld))),
+    ...payments.intents.map((one) => intentRow(one, now)),
+    ...payments.events.map((one) => eventRow(one, now)),
+    ...letters,
+    ...checks.map((one) => checkRow(one, now)),
+  ].sort(soonestFirst);
+}
+
+export async function readToday(db: Db, person: Reader, now: Date): Promise<Today> {
+  const since = new Date(now.getTime() - HISTORY_MS);
+  const [rows, history] = await Promise.all([
+    listOwed(db, person, now),
+    mayReadGifts(person) ? listGiftHistory(db, since, HISTORY_LINES) : [],
+  ]);
+  return { day: dayOf(now), rows, history };
+}

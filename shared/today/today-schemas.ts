@@ -1,0 +1,41 @@
+// What Today shows: one row for each thing that is owed, soonest first, each with one action.
+import { z } from 'zod';
+import { daySchema } from '#shared/dates.ts';
+import { historyLineSchema, WORDS_KINDS } from '#shared/giving/desk-schemas.ts';
+
+export const owedActionSchema = z.discriminatedUnion('kind', [
+  /** Words that may be passed from Today itself with one press. */
+  z.object({
+    kind: z.literal('judge'),
+    giftNumber: z.int(),
+    wordsId: z.uuid(),
+    wordsKind: z.enum(WORDS_KINDS),
+    words: z.string(),
+  }),
+  z.object({ kind: z.literal('open'), label: z.string(), path: z.string() }),
+  /** Nothing to open elsewhere: what is known unfolds in the row. */
+  z.object({ kind: z.literal('look'), label: z.string() }),
+]);
+export type OwedAction = z.infer<typeof owedActionSchema>;
+
+export const owedRowSchema = z.object({
+  id: z.string(),
+  due: z.enum(['late', 'today']),
+  dueDay: daySchema,
+  what: z.string(),
+  owedTo: z.string(),
+  since: z.iso.datetime(),
+  waitedDays: z.int(),
+  waited: z.string(),
+  detail: z.array(z.string()),
+  action: owedActionSchema,
+});
+export type OwedRow = z.infer<typeof owedRowSchema>;
+
+export const todaySchema = z.object({
+  day: daySchema,
+  rows: z.array(owedRowSchema),
+  /** Newest first: what was done to gifts since yesterday. */
+  history: z.array(historyLineSchema),
+});
+export type Today = z.infer<typeof todaySchema>;
