@@ -24,7 +24,7 @@ const clockTime = new Intl.DateTimeFormat('en-GB', {
   timeZone: TIME_ZONE,
   hour: 'numeric',
   minute: '2-digit',
-  hour12: true,
+  hourCycle: 'h12',
 });
 
 /** The London day in which a moment falls. */

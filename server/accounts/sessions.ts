@@ -86,6 +86,11 @@ export async function endSession(req: Request): Promise<void> {
   await new Promise<void>((resolve, reject) => req.session.destroy(settle(resolve, reject)));
 }
 
+// What an open page asks by itself, once a minute, is no sign of life: else a forgotten window would never time out.
+const ASKED_BY_ITSELF = new Set(['GET /api/desk/today']);
+const isSignOfLife = (req: Request): boolean =>
+  !ASKED_BY_ITSELF.has(`${req.method} ${req.originalUrl.split('?')[0]}`);
+
 const isOver = (desk: DeskSession, now: number): boolean => now - desk.startedAt > ABSOLUTE_MS;
 
 /** Looks at the person's own row on every request: whoever is switched off is out at once. */
@@ -99,7 +104,8 @@ const keepSession =
     const now = Date.now();
     if (!account || account.isSwitchedOff || isOver(desk, now)) await endSession(req);
     else {
-      if (now - desk.seenAt > TOUCH_EVERY_MS) await touchSession(db, req.sessionID, desk.startedAt);
+      if (isSignOfLife(req) && now - desk.seenAt > TOUCH_EVERY_MS)
+        await touchSession(db, req.sessionID, desk.startedAt);
       present.set(req, { account, desk });
     }
     next();

@@ -47,9 +47,10 @@ const givenLines = (receipt: Receipt): string =>
   receipt.shares.map((one) => `Towards: ${one.name}, ${formatPence(one.amountPence)}`).join('\n');
 
 function opening(receipt: Receipt): string {
-  const gave = `You gave ${formatPence(receipt.sumPence)} to ${midSentence(receipt.campaignName)} on ${receipt.givenOn}`;
-  if (receipt.dedication) return `${gave},${dedicationPhrase(receipt.dedication)}.`;
-  return `${gave}. One peg is nothing; hundreds hold up the whole frame. Thank you for yours.`;
+  const gave = `You gave ${formatPence(receipt.sumPence)} to ${midSentence(receipt.campaignName)} on ${receipt.givenOn}.`;
+  return receipt.dedication?.kind === 'memory'
+    ? `${gave} We will use it with care.`
+    : `${gave} One peg is nothing; hundreds hold up the whole frame. Thank you for yours.`;
 }
 
 const wallNote = (receipt: Receipt): string | null =>

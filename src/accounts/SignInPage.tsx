@@ -25,8 +25,7 @@ export function SignInPage() {
       )}
       <SignInForm />
       <p className="ash door-note">
-        Password forgotten? The chair can give you a new beginning. Tries too often and too fast are made to wait;
-        nobody is locked out for good.
+        Whoever tries too often waits a little before the next try. Nobody is locked out for good.
       </p>
     </main>
   );

@@ -7,7 +7,11 @@ export const accountPaths = {
   account: '/desk/account',
 } as const;
 
-const DOORS: readonly string[] = [accountPaths.signIn, accountPaths.secondFactor, accountPaths.secondFactorSetup];
+const DOORS: readonly string[] = [
+  accountPaths.signIn,
+  accountPaths.secondFactor,
+  accountPaths.secondFactorSetup,
+];
 // The base is only there to read a path with; what leads away from it is another site.
 const HERE = 'http://here.invalid';
 

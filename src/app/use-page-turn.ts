@@ -1,5 +1,5 @@
 // After a page is turned in the browser: its title is told, and focus stands on its heading.
-import { useEffect, useRef } from 'react';
+import { useEffect, useLayoutEffect, useRef } from 'react';
 import { useLocation, useMatches } from 'react-router-dom';
 import { readHandle, titleOf } from '#src/lib/route-handle.ts';
 
@@ -18,9 +18,10 @@ export function usePageTurn(societyName: string): void {
   const place = readHandle(matches.at(-1)?.handle).place ?? pathname;
   const shown = useRef(place);
 
-  useEffect(() => {
+  // Before the effects of the page below, so that a page that failed has the last word on its title.
+  useLayoutEffect(() => {
     document.title = title;
-  }, [title]);
+  }, [title, pathname]);
   useEffect(() => {
     if (shown.current === place) return;
     shown.current = place;

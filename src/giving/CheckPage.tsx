@@ -79,8 +79,8 @@ function useFreshAfterReturn() {
 }
 
 export function CheckPage() {
-  const { check, isReturned } = useLoaderData<CheckPageData>();
-  const trouble = useActionData<PressTrouble>();
+  const { check, isReturned, trouble: troubleBefore } = useLoaderData<CheckPageData>();
+  const trouble = useActionData<PressTrouble>() ?? troubleBefore;
   const isWorking = useNavigation().formAction !== undefined;
   useTroubleTitle(trouble?.heading);
   useFreshAfterReturn();

@@ -17,12 +17,9 @@ import { SHEET_ID, useGiveForm, type SheetControls } from './use-give-form.ts';
 import { useTroubleTitle } from './use-trouble-title.ts';
 import { WallRow } from './WallRow.tsx';
 
-const NOTICES = {
-  again:
-    'We could not find your answers to check them. They are kept under a cookie, so this happens when cookies are switched off or a long time has gone by. Nothing was taken. Please fill in the sheet here.',
-  unfinished:
-    'Some answers are not complete yet. Everything you wrote is here; press the button below to see what is missing.',
-} as const;
+// Whoever has just paid and steps back comes here too, so that it must not say that nothing was taken.
+const LOST_SHEET =
+  'There is nothing here to check. If you have just given, that sheet is done with, and your receipt comes by e-mail. If you had not paid yet, your answers could not be found: cookies are switched off, or a long time went by. Please fill in the sheet here.';
 
 /** Words that once came with the address must not overwrite, on the way back, what was written since. */
 function usePlainAddress() {
@@ -51,8 +48,9 @@ function WhatIsWrong({ controls, trouble, isWorking }: TroubleProps) {
 }
 
 export function GivePage() {
-  const { sheet, notice } = useLoaderData<GivePageData>();
-  const { controls, trouble, isWorking, press } = useGiveForm(sheet, useActionData<SheetTrouble>());
+  const loaded = useLoaderData<GivePageData>();
+  const { sheet, isLostSheet } = loaded;
+  const { controls, trouble, isWorking, press } = useGiveForm(loaded, useActionData<SheetTrouble>());
   const faultCount = Object.keys(controls.faults).length;
   usePlainAddress();
   useTroubleTitle(trouble?.heading ?? (faultCount > 0 ? faultsHeading(faultCount) : undefined));
@@ -62,9 +60,9 @@ export function GivePage() {
       <h1>Give to {inSentence(sheet.campaignName)}</h1>
       <p className="lead">One sheet, about two minutes. You see everything once more before you pay.</p>
       <WhatIsWrong {...{ controls, trouble, isWorking }} />
-      {notice ? (
+      {isLostSheet ? (
         <p className="told" role="status">
-          {NOTICES[notice]}
+          {LOST_SHEET}
         </p>
       ) : null}
       <form

@@ -5,7 +5,6 @@ import type { FieldFaults } from '#shared/errors.ts';
 import type { GiveAnswers } from '#shared/giving/give-schemas.ts';
 import { ApiProblem, NoAnswer } from '#src/lib/api.ts';
 import type { RouteContext } from '#src/lib/route-context.ts';
-import { faultsHeading } from '#src/ui/ErrorSummary.tsx';
 import { readForm } from './give-form-data.ts';
 import { saveDraft, startCheckout } from './give-queries.ts';
 
@@ -18,8 +17,19 @@ const LOST: PressTrouble = {
   heading: 'Your connection is lost. Nothing was taken and everything you wrote is still here.',
   isLost: true,
 };
+const OUR_FAULT: PressTrouble = {
+  heading: 'Something went wrong here. Nothing was taken and everything you wrote is still here.',
+  detail: 'The fault is ours, not yours. Try again in a minute.',
+};
 export const START_AGAIN = '/give?again=1';
+/** The sheet with every fault of the kept draft named. */
 export const UNFINISHED = '/give?unfinished=1';
+
+/**
+ * A page that answers a posted form cannot be gone back to: it is never kept, so the browser would have to post
+ * again. Without script the trouble is therefore told by the page to which the press leads.
+ */
+const isOnServer = typeof document === 'undefined';
 
 const TITLE_KEY = ['giving', 'title-of-trouble'] as const;
 
@@ -35,13 +45,7 @@ function troubleOf(error: unknown): { trouble: PressTrouble; status: number } {
   if (!(error instanceof ApiProblem)) throw error;
   const { status, title, detail } = error.problem;
   if (status < 500 || status === 502) return { trouble: { heading: detail ?? title }, status };
-  return {
-    trouble: {
-      heading: 'Something went wrong here. Nothing was taken and everything you wrote is still here.',
-      detail: 'The fault is ours, not yours. Try again in a minute.',
-    },
-    status,
-  };
+  return { trouble: OUR_FAULT, status };
 }
 
 export async function pressCheck({ api, queryClient }: RouteContext, request: Request) {
@@ -52,7 +56,7 @@ export async function pressCheck({ api, queryClient }: RouteContext, request: Re
   } catch (error) {
     if (error instanceof ApiProblem && error.problem.fields) {
       const { fields } = error.problem;
-      queryClient.setQueryData(TITLE_KEY, faultsHeading(Object.keys(fields).length));
+      if (isOnServer) return redirect(UNFINISHED, SEE_OTHER);
       return data<SheetTrouble>({ fields, answers }, { status: 400 });
     }
     const { trouble, status } = troubleOf(error);
@@ -69,7 +73,18 @@ export function backToSheet(error: unknown): string | undefined {
   return reason === 'no-draft' || status === 404 ? START_AGAIN : undefined;
 }
 
-export async function pressPay({ api, queryClient }: RouteContext) {
+const payTroublePath = (status: number) =>
+  `/give/check?trouble=${status === 429 ? 'many' : status === 502 ? 'away' : 'fault'}`;
+const PAY_TROUBLES: Record<string, PressTrouble> = {
+  many: { heading: 'Too many tries came from here. Nothing was taken. Wait a little and try again.' },
+  away: { heading: 'The card service did not answer. Nothing was taken. Try again in a minute.' },
+  fault: OUR_FAULT,
+};
+/** What went wrong with the press that led here, when one did. */
+export const payTroubleOf = (search: URLSearchParams): PressTrouble | undefined =>
+  PAY_TROUBLES[search.get('trouble') ?? ''];
+
+export async function pressPay({ api }: RouteContext) {
   try {
     const { url } = await startCheckout(api);
     return redirectDocument(url, SEE_OTHER);
@@ -78,7 +93,7 @@ export async function pressPay({ api, queryClient }: RouteContext) {
     if (sheet !== undefined) return redirect(sheet, SEE_OTHER);
     const { trouble, status } = troubleOf(error);
     const isFull = error instanceof ApiProblem && error.problem.reason === 'part-full';
-    queryClient.setQueryData(TITLE_KEY, trouble.heading);
+    if (isOnServer) return redirect(isFull ? UNFINISHED : payTroublePath(status), SEE_OTHER);
     return data<PressTrouble>({ ...trouble, ...(isFull && { changeTo: '/give#towards' }) }, { status });
   }
 }

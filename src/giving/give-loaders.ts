@@ -1,12 +1,25 @@
 // What each giving page needs before it is drawn, with its title.
 import { redirect } from 'react-router-dom';
 import { formatPence } from '#shared/money.ts';
-import type { GiveOutcome } from '#shared/giving/give-schemas.ts';
+import { fieldFaults, type FieldFaults } from '#shared/errors.ts';
+import { giveRequestSchema, type GiveOutcome, type GiveSheet } from '#shared/giving/give-schemas.ts';
 import type { RouteContext } from '#src/lib/route-context.ts';
 import { nothingHere } from '#src/lib/page-fault.ts';
-import { backToSheet, takeTroubleTitle } from './give-actions.ts';
+import { faultsHeading } from '#src/ui/ErrorSummary.tsx';
+import { backToSheet, payTroubleOf, takeTroubleTitle } from './give-actions.ts';
 import { giveCheckQuery, giveOutcomeQuery, giveSheetQuery, receiptQuery } from './give-queries.ts';
 import { atStart, inSentence } from './give-words.ts';
+
+/** The faults of a draft as it was kept, by the rules that also judge the press. */
+function faultsOf(sheet: GiveSheet): FieldFaults {
+  const { answers, openParts, leastPence } = sheet;
+  const judged = giveRequestSchema({ leastPence }).safeParse(answers);
+  const faults = judged.success ? {} : fieldFaults(judged.error);
+  const { towards = 'whole' } = answers;
+  if (towards !== 'whole' && !openParts.some((part) => part.slug === towards))
+    faults.towards = 'The part you chose is paid for now. Choose another part, or the whole figure.';
+  return faults;
+}
 
 /** A sum written on the way here was written instead of choosing one. */
 function askedFor(search: URLSearchParams): string {
@@ -20,29 +33,38 @@ function askedFor(search: URLSearchParams): string {
 }
 
 const titled = (context: RouteContext, title: string): string => {
-  const trouble = takeTroubleTitle(context.queryClient);
-  return trouble === undefined ? title : `${trouble}. ${title}`;
+  const heading = takeTroubleTitle(context.queryClient);
+  return heading === undefined ? title : `${heading} ${title}`;
 };
 
 export async function loadSheet(context: RouteContext, request: Request) {
   const { searchParams } = new URL(request.url);
   const query = giveSheetQuery(context.api, askedFor(searchParams));
   const sheet = await context.queryClient.fetchQuery(query);
-  const notice = searchParams.has('again')
-    ? ('again' as const)
-    : searchParams.has('unfinished')
-      ? ('unfinished' as const)
-      : null;
-  return { title: titled(context, `Give to ${inSentence(sheet.campaignName)}`), sheet, notice };
+  const faults = searchParams.has('unfinished') ? faultsOf(sheet) : {};
+  const count = Object.keys(faults).length;
+  const title = `Give to ${inSentence(sheet.campaignName)}`;
+  return {
+    title: titled(context, count > 0 ? `${faultsHeading(count)}. ${title}` : title),
+    sheet,
+    faults,
+    isLostSheet: searchParams.has('again'),
+  };
 }
 export type GivePageData = Awaited<ReturnType<typeof loadSheet>>;
 
 export async function loadCheck(context: RouteContext, request: Request) {
   try {
     const check = await context.queryClient.fetchQuery(giveCheckQuery(context.api));
-    const isReturned = new URL(request.url).searchParams.has('returned');
+    const { searchParams } = new URL(request.url);
+    const trouble = payTroubleOf(searchParams);
     const title = `Check before you pay. ${atStart(check.campaignName)}`;
-    return { title: titled(context, title), check, isReturned };
+    return {
+      title: trouble ? `${trouble.heading} ${title}` : title,
+      check,
+      trouble,
+      isReturned: searchParams.has('returned'),
+    };
   } catch (error) {
     const sheet = backToSheet(error);
     if (sheet !== undefined) throw redirect(sheet);

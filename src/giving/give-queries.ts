@@ -44,8 +44,14 @@ export const receiptQuery = (api: Api, token: string) =>
     ...AFRESH,
   });
 
-export const saveDraft = (api: Api, answers: GiveAnswers) =>
-  api.send(z.object({}), DRAFT_PATH, { method: 'PUT', body: answers });
+/** The last quiet keeping still on its way. */
+let quietSending: Promise<unknown> = Promise.resolve();
+
+export async function saveDraft(api: Api, answers: GiveAnswers): Promise<void> {
+  // Were an earlier keeping to arrive after this one, it would put older answers in place of these.
+  await quietSending;
+  await api.send(z.object({}), DRAFT_PATH, { method: 'PUT', body: answers });
+}
 
 export const startCheckout = (api: Api) =>
   api.send(checkoutSchema, '/api/gifts/checkout', { method: 'POST', body: {} });
@@ -59,5 +65,5 @@ export function keepDraftQuietly(answers: GiveAnswers): void {
     keepalive: true,
   });
   // Without a connection the sheet is still in the open page, and it is sent again at the next step away.
-  sending.catch(() => undefined);
+  quietSending = sending.catch(() => undefined);
 }

@@ -12,6 +12,7 @@ import {
   type GiveSheet,
 } from '#shared/giving/give-schemas.ts';
 import type { SheetTrouble } from './give-actions.ts';
+import type { GivePageData } from './give-loaders.ts';
 import { startTexts, typedBefore, type FormTexts } from './give-form-data.ts';
 import { useQuietKeeping } from './use-quiet-keeping.ts';
 
@@ -32,8 +33,8 @@ const wordsOf = (errors: FieldErrors<FormTexts>): FieldFaults =>
   Object.fromEntries(Object.entries(errors).map(([field, { message }]) => [field, message ?? '']));
 
 /** What the last press was answered, kept when a step to another place of the page makes the router forget it. */
-function useLastTrouble(sent: SheetTrouble | undefined) {
-  const [last, setLast] = useState<Partial<SheetTrouble>>(sent ?? {});
+function useLastTrouble(sent: SheetTrouble | undefined, loaded: FieldFaults) {
+  const [last, setLast] = useState<Partial<SheetTrouble>>(sent ?? { fields: loaded });
   const [seen, setSeen] = useState(sent);
   if (sent && sent !== seen) {
     setSeen(sent);
@@ -42,11 +43,11 @@ function useLastTrouble(sent: SheetTrouble | undefined) {
   return [last, setLast] as const;
 }
 
-export function useGiveForm(sheet: GiveSheet, sent: SheetTrouble | undefined) {
+export function useGiveForm({ sheet, faults }: GivePageData, sent: SheetTrouble | undefined) {
   const [start] = useState(() => startTexts({ ...sheet.answers, ...sent?.answers }, sheet.openParts));
   // The page may have been written in before the script arrived.
   const [written] = useState(() => typedBefore(SHEET_ID) ?? start);
-  const [last, setLast] = useLastTrouble(sent);
+  const [last, setLast] = useLastTrouble(sent, faults);
   const form = useForm<FormTexts, unknown, GiveFormFilled>({
     defaultValues: written,
     resolver: zodResolver(schemaOf(sheet)),

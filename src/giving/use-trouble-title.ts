@@ -6,7 +6,7 @@ export function useTroubleTitle(heading: string | undefined): void {
     if (heading === undefined) return;
     const title = document.title;
     if (title.startsWith(heading)) return;
-    document.title = `${heading}. ${title}`;
+    document.title = `${heading}${heading.endsWith('.') ? '' : '.'} ${title}`;
     return () => {
       // Another page has set its own title by now, or the trouble is over.
       if (document.title.startsWith(heading)) document.title = title;

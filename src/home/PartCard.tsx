@@ -6,7 +6,7 @@ import { MoneyText } from '#src/ui/MoneyText.tsx';
 import { Stamp } from '#src/ui/Stamp.tsx';
 import { Swatch } from '#src/ui/Swatch.tsx';
 import { heightClass } from './height-class.ts';
-import { heightRange, isOpen } from './part-words.ts';
+import { heightRange, isOpen, middleMm } from './part-words.ts';
 import { placeOf, stateWord, STATE_TONES } from './part-place.ts';
 
 function Facts({ campaign, part }: { campaign: Campaign; part: Part }) {
@@ -43,8 +43,6 @@ function Facts({ campaign, part }: { campaign: Campaign; part: Part }) {
     </dl>
   );
 }
-
-const middleMm = ({ bottomMm, topMm }: Part): number => ((bottomMm ?? 0) + (topMm ?? 0)) / 2;
 
 type Props = { campaign: Campaign; part: Part; headingRef: Ref<HTMLHeadingElement> };
 

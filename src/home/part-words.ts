@@ -18,6 +18,10 @@ const oneDecimal = (mm: number): string => (Math.floor(mm / 100 + 0.5) / 10).toF
 export const heightRange = ({ bottomMm, topMm }: Pick<Part, 'bottomMm' | 'topMm'>): string | null =>
   bottomMm === null || topMm === null ? null : `${oneDecimal(bottomMm)} to ${oneDecimal(topMm)} m`;
 
+/** Half way up a part; a cost without height stands on the ground. */
+export const middleMm = ({ bottomMm, topMm }: Pick<Part, 'bottomMm' | 'topMm'>): number =>
+  ((bottomMm ?? 0) + (topMm ?? 0)) / 2;
+
 /** Inside a sentence: "the 24 panes", "the lantern frame". */
 export function inSentence(name: string): string {
   const bare = name.replace(/^the\s+/i, '');

@@ -14,7 +14,7 @@ export function JudgeButtons({ action, isNext }: Props) {
   const decide = (verdict: 'passed' | 'held') => () =>
     judge.mutate(
       { giftNumber: action.giftNumber, wordsId: action.wordsId, verdict },
-      { onSettled: () => queryClient.invalidateQueries({ queryKey: TODAY }) },
+      { onSettled: () => void queryClient.invalidateQueries({ queryKey: TODAY }) },
     );
   return (
     <>

@@ -2,6 +2,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import { formatDay, weekdayOf } from '#shared/dates.ts';
+import type { Today } from '#shared/today/today-schemas.ts';
 import { useApi } from '#src/lib/use-api.ts';
 import { AskAgain } from '#src/ui/AskAgain.tsx';
 import { HistoryList } from '#src/ui/HistoryList.tsx';
@@ -10,14 +11,29 @@ import { Headpiece } from './Headpiece.tsx';
 import { OwedTable } from './OwedTable.tsx';
 import { todayQuery } from './today-queries.ts';
 
-export function TodayPage() {
-  const answer = useQuery(todayQuery(useApi()));
-  const today = answer.data;
-  const history = (today?.history ?? []).map(({ at, words, giftNumber }) => ({
+function TodayMargin({ history }: { history: Today['history'] }) {
+  const items = history.map(({ at, words, giftNumber }) => ({
     at,
     words,
     link: giftNumber === null ? null : { path: `/desk/gifts/${giftNumber}`, label: `Gift ${giftNumber}` },
   }));
+  return (
+    <aside className="margin" aria-label="History and notes">
+      <h2>Since yesterday</h2>
+      <HistoryList items={items} />
+      <h2>How to read this</h2>
+      <p className="note">
+        Three strokes, three days waited; the fifth stroke crosses. Words from givers are read within three
+        days, letters that came back are settled within one.
+      </p>
+      <p className="note">A row leaves the list when the thing is done, never because it was looked at.</p>
+    </aside>
+  );
+}
+
+export function TodayPage() {
+  const answer = useQuery(todayQuery(useApi()));
+  const today = answer.data;
   return (
     <>
       <main className="sheet" id="sheet" tabIndex={-1}>
@@ -38,16 +54,7 @@ export function TodayPage() {
           </p>
         )}
       </main>
-      <aside className="margin" aria-label="History and notes">
-        <h2>Since yesterday</h2>
-        <HistoryList items={history} />
-        <h2>How to read this</h2>
-        <p className="note">
-          Three strokes, three days waited; the fifth stroke crosses. Words from givers are read within three
-          days, letters that came back are settled within one.
-        </p>
-        <p className="note">A row leaves the list when the thing is done, never because it was looked at.</p>
-      </aside>
+      <TodayMargin history={today?.history ?? []} />
     </>
   );
 }

@@ -16,6 +16,7 @@ import {
 import { hashPassword, isPasswordRight } from '#server/accounts/passwords.ts';
 import { seal, unseal } from '#server/accounts/sealing.ts';
 import { networkOf } from '#server/accounts/tries.ts';
+import { ownPath, withNext } from '#src/accounts/account-paths.ts';
 import { requireJson } from '#server/platform/json-only.ts';
 
 describe('a new password', () => {
@@ -119,6 +120,30 @@ describe('what is sent to sign in', () => {
     { email: 'a', password: 'x' },
     { email: 'a@b.example', password: { $ne: '' } },
   ])('is refused as %j', (input) => expect(signInSchema.safeParse(input).success).toBe(false));
+});
+
+describe('where signing in leads', () => {
+  it.each(['/desk', '/desk/gifts', '/desk/gifts/41?from=today', '/desk/account#password'])(
+    'is the page %s that was asked for',
+    (path) => {
+      expect(ownPath(path)).toBe(path);
+      expect(ownPath(new URLSearchParams(withNext('', path).slice(1)).get('next'))).toBe(path);
+    },
+  );
+  it.each([
+    null,
+    '',
+    'https://evil.example/desk',
+    '//evil.example/desk',
+    '/\\evil.example/desk',
+    '/desk/../../evil',
+    '/deskless',
+    '/give',
+    'javascript:alert(1)',
+    '/desk/sign-in',
+    '/desk/second-factor',
+    '\t//evil.example',
+  ])('is Today instead of %s', (path) => expect(ownPath(path)).toBe('/desk'));
 });
 
 describe('networks', () => {

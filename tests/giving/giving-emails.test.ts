@@ -49,7 +49,8 @@ describe('the thank-you', () => {
     for (const text of [plain, seen(html)])
       for (const words of [
         'Dear Mrs Quillan,',
-        'You gave £60 to the Lampwoman on 3 May 2027, in memory of Walter Quillan.',
+        'Thank you for your gift in memory of Walter Quillan.',
+        'You gave £60 to the Lampwoman on 3 May 2027.',
         'Head and scarf',
         '£45',
         'The whole figure, from the ground up',

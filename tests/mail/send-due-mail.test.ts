@@ -1,6 +1,6 @@
 // What becomes of a letter: sent once, tried again, failed, or doubtful and left for a person.
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import { sendDueMail, type SendingInput } from '#server/platform/mail/index.ts';
+import { countDueMail, mailTasks, sendDueMail, type SendingInput } from '#server/platform/mail/index.ts';
 import { FROM_NAME, queueOne, rowOf, setUpMail, startRudeServer, type MailSetting } from './mail-setting.ts';
 
 let setting: MailSetting;
@@ -213,5 +213,25 @@ describe('a letter that must not go out after all', () => {
       response: 'The giver asked us to stop.',
     });
     expect(setting.smtp.messages()).toHaveLength(0);
+  });
+});
+
+describe('the worker’s task', () => {
+  const task = (deps = setting.deps) =>
+    mailTasks(deps, { findFromName: () => Promise.resolve(FROM_NAME), now: setting.now })['send-mail']();
+
+  it('empties the outbox, however much is in it', async () => {
+    for (let index = 0; index < 23; index += 1) await queueOne(setting.db);
+    expect(await countDueMail(setting.db, setting.now())).toBe(23);
+    await task();
+    expect(await countDueMail(setting.db, setting.now())).toBe(0);
+    expect(setting.smtp.messages()).toHaveLength(23);
+  });
+
+  it('stops when the mail server is away, and leaves the rest for later', async () => {
+    await queueOne(setting.db);
+    await queueOne(setting.db);
+    await task({ ...setting.deps, mailer: setting.mailerTo('smtp://127.0.0.1:1') });
+    expect(await countDueMail(setting.db, setting.now())).toBe(1);
   });
 });

@@ -1,15 +1,13 @@
 // The stand-in's answers beside the payment service's own published example objects (its open API description, MIT).
-import { existsSync, readFileSync } from 'node:fs';
-import { resolve } from 'node:path';
+import { readFileSync } from 'node:fs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { z } from 'zod';
 import { chargeOf, giftOf, intentOf, payGift, startStandIn } from '#tests/payment-service/stand-in.ts';
 import type { StandIn } from '#tests/payment-service/stand-in.ts';
+import { findShared } from '#tests/support/shared-facts.ts';
 
-const shared = process.env.TREENAIL_SHARED ?? resolve(import.meta.dirname, '../../../shared');
-const path = resolve(shared, 'facts/payment-service/fixtures3.json');
-const isThere = existsSync(path);
-if (!isThere) console.warn(`skipped: the published example objects are not at ${path}`);
+const path = findShared('facts/payment-service/fixtures3.json');
+const isThere = path !== undefined;
 
 const exampleSchema = z.record(z.string(), z.unknown());
 const examples = isThere

@@ -79,7 +79,8 @@ export async function startTestApp(options: Options = {}): Promise<TestApp> {
     database,
     clock,
     paymentControls: payments.controlUrl,
-    agent: () => supertest.agent(url),
+    // As a page of ours asks: what comes with a cookie and no origin is refused.
+    agent: () => supertest.agent(url).set('Origin', url),
     async stop() {
       server.closeAllConnections();
       await new Promise((resolve) => server.close(resolve));

@@ -24,6 +24,10 @@ export function openInProcess(handler: RequestListener): InProcess {
 
   function connect(remoteAddress: string | undefined): Duplex {
     const [ours, theirs] = duplexPair();
+    // An end travels from one to the other by itself, a breach does not.
+    theirs.once('close', () => {
+      if (!theirs.writableEnded) ours.destroy(new Error('the handler broke off'));
+    });
     server.emit('connection', Object.assign(theirs, { remoteAddress }));
     return ours;
   }

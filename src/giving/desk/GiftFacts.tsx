@@ -80,7 +80,7 @@ function Purpose({ gift }: { gift: GiftChain }) {
 
 export function GiftFacts({ gift }: { gift: GiftChain }) {
   return (
-    <div className="facts">
+    <div className="gift-facts">
       <Giver gift={gift} />
       <Declaration gift={gift} />
       <Purpose gift={gift} />

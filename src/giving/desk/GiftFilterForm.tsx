@@ -2,71 +2,60 @@
 import type { SubmitEvent } from 'react';
 import { useNavigate } from 'react-router-dom';
 import type { GiftFilter, GiftList } from '#shared/giving/desk-schemas.ts';
+import { FilterChoice } from './FilterChoice.tsx';
 import { readFilter, toSearch } from './gift-filter.ts';
 
 type Props = { filter: GiftFilter; parts: GiftList['parts']; onFault: (fault: string | null) => void };
+
+const TOWARDS = [
+  ['any', 'any part or the whole'],
+  ['whole', 'the whole figure'],
+] as const;
+const THANKS = [
+  ['any', 'thanked or not'],
+  ['not-yet-thanked', 'not yet thanked'],
+  ['thanked', 'thanked'],
+] as const;
+const WORDS = [
+  ['any', 'with any words or none'],
+  ['unread', 'with words to read'],
+] as const;
+const ORDERS = [
+  ['newest', 'newest day first'],
+  ['oldest', 'oldest day first'],
+  ['largest', 'largest first'],
+] as const;
+
+function typedIn(form: HTMLFormElement): URLSearchParams {
+  const typed = new URLSearchParams();
+  for (const [key, value] of new FormData(form)) if (typeof value === 'string') typed.set(key, value);
+  return typed;
+}
 
 export function GiftFilterForm({ filter, parts, onFault }: Props) {
   const navigate = useNavigate();
   const show = (event: SubmitEvent<HTMLFormElement>): void => {
     event.preventDefault();
-    const typed = new URLSearchParams();
-    for (const [key, value] of new FormData(event.currentTarget))
-      if (typeof value === 'string') typed.set(key, value);
-    const read = readFilter(typed);
-    onFault(read.fault);
-    if (read.fault === null) void navigate({ search: toSearch({ ...read.filter, after: '' }) });
+    const { filter: asked, fault } = readFilter(typedIn(event.currentTarget));
+    onFault(fault);
+    if (fault === null) void navigate({ search: toSearch({ ...asked, after: '' }) });
   };
+  const towards = [...TOWARDS, ...parts.map(({ slug, name }) => [slug, name] as const)];
+  // Keyed by what is shown, so that the browser's back also turns the sentence back.
+  const key = `${toSearch(filter)} ${parts.length}`;
   return (
-    // Keyed by what is shown, so that the browser's back also turns the sentence back.
-    <form className="ask" onSubmit={show} key={toSearch(filter)} aria-label="Which gifts to show" noValidate>
+    <form className="ask" onSubmit={show} key={key} aria-label="Which gifts to show" noValidate>
       <p>
-        Gifts to{' '}
-        <label>
-          <span className="vh">Part</span>
-          <select name="towards" defaultValue={filter.towards}>
-            <option value="any">any part or the whole</option>
-            <option value="whole">the whole figure</option>
-            {parts.map(({ slug, name }) => (
-              <option key={slug} value={slug}>
-                {name}
-              </option>
-            ))}
-          </select>
-        </label>{' '}
+        Gifts to <FilterChoice name="towards" label="Part" value={filter.towards} options={towards} />{' '}
         <label>
           since <input type="date" name="from" defaultValue={filter.from} />
         </label>{' '}
         <label>
           until <input type="date" name="to" defaultValue={filter.to} />
         </label>
-        ,{' '}
-        <label>
-          <span className="vh">Thanks</span>
-          <select name="thanks" defaultValue={filter.thanks}>
-            <option value="any">thanked or not</option>
-            <option value="not-yet-thanked">not yet thanked</option>
-            <option value="thanked">thanked</option>
-          </select>
-        </label>
-        ,{' '}
-        <label>
-          <span className="vh">Words</span>
-          <select name="words" defaultValue={filter.words}>
-            <option value="any">with any words or none</option>
-            <option value="unread">with words to read</option>
-          </select>
-        </label>
-        ,{' '}
-        <label>
-          <span className="vh">Order</span>
-          <select name="sort" defaultValue={filter.sort}>
-            <option value="newest">newest day first</option>
-            <option value="oldest">oldest day first</option>
-            <option value="largest">largest first</option>
-          </select>
-        </label>
-        .{' '}
+        , <FilterChoice name="thanks" label="Thanks" value={filter.thanks} options={THANKS} />,{' '}
+        <FilterChoice name="words" label="Words" value={filter.words} options={WORDS} />,{' '}
+        <FilterChoice name="sort" label="Order" value={filter.sort} options={ORDERS} />.{' '}
         <button className="act" type="submit">
           Show
         </button>

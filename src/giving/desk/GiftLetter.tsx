@@ -35,7 +35,41 @@ function Standing({ mail }: { mail: GiftMail }) {
   );
 }
 
-export function GiftLetter({ mail, isBusy, onDecide }: Props) {
+function Decide({ name, mail, isBusy, onDecide }: Props & { name: string }) {
+  return (
+    <>
+      {mail.state === 'uncertain' && (
+        <p className="small">
+          It may have arrived. Sent again, it keeps its number, so most mailboxes show it once.
+        </p>
+      )}
+      <p className="acts">
+        <button type="button" className="act first" disabled={isBusy} onClick={() => onDecide('send-again')}>
+          Send again<span className="vh">: {name}</span>
+        </button>
+        <button type="button" className="act" disabled={isBusy} onClick={() => onDecide('leave')}>
+          Leave it<span className="vh">: {name}</span>
+        </button>
+      </p>
+    </>
+  );
+}
+
+function Text({ name, mail }: { name: string; mail: GiftMail }) {
+  if (mail.plain === null) return <p className="small ash">Its words are withheld with the name.</p>;
+  return (
+    <details className="letter">
+      <summary>Read exactly what {mail.sentAt === null ? 'is to be sent' : 'was sent'}</summary>
+      <p className="small ash">Subject: {mail.subject}</p>
+      <pre tabIndex={0} role="region" aria-label={`${name}, its text`}>
+        {mail.plain}
+      </pre>
+    </details>
+  );
+}
+
+export function GiftLetter(props: Props) {
+  const { mail } = props;
   const name = KINDS[mail.kind] ?? mail.kind;
   return (
     <li>
@@ -47,39 +81,8 @@ export function GiftLetter({ mail, isBusy, onDecide }: Props) {
         <Standing mail={mail} />
       </p>
       {mail.answer && <p className="small ash">The mail server said: {mail.answer}</p>}
-      {mail.maySettle && (
-        <>
-          {mail.state === 'uncertain' && (
-            <p className="small">
-              It may have arrived. Sent again, it keeps its number, so most mailboxes show it once.
-            </p>
-          )}
-          <p className="acts">
-            <button
-              type="button"
-              className="act first"
-              disabled={isBusy}
-              onClick={() => onDecide('send-again')}
-            >
-              Send again<span className="vh">: {name}</span>
-            </button>
-            <button type="button" className="act" disabled={isBusy} onClick={() => onDecide('leave')}>
-              Leave it<span className="vh">: {name}</span>
-            </button>
-          </p>
-        </>
-      )}
-      {mail.plain === null ? (
-        <p className="small ash">Its words are withheld with the name.</p>
-      ) : (
-        <details className="letter">
-          <summary>Read exactly what {mail.sentAt === null ? 'is to be sent' : 'was sent'}</summary>
-          <p className="small ash">Subject: {mail.subject}</p>
-          <pre tabIndex={0} aria-label={`${name}, its text`}>
-            {mail.plain}
-          </pre>
-        </details>
-      )}
+      {mail.maySettle && <Decide {...props} name={name} />}
+      <Text name={name} mail={mail} />
     </li>
   );
 }

@@ -2,10 +2,12 @@
 import { useQuery } from '@tanstack/react-query';
 import { Link, useParams } from 'react-router-dom';
 import { formatDay, weekdayOf } from '#shared/dates.ts';
+import type { GiftChain } from '#shared/giving/desk-schemas.ts';
 import { formatPence } from '#shared/money.ts';
 import { useApi } from '#src/lib/use-api.ts';
 import { AskAgain } from '#src/ui/AskAgain.tsx';
 import { WaitingRows } from '#src/ui/WaitingRows.tsx';
+import { CardFacts } from './CardFacts.tsx';
 import { giftChainQuery } from './gift-desk-queries.ts';
 import { GiftBooks } from './GiftBooks.tsx';
 import { GiftFacts } from './GiftFacts.tsx';
@@ -15,6 +17,23 @@ import { GiftSteps } from './GiftSteps.tsx';
 import { GiftWordings } from './GiftWordings.tsx';
 import { GiftWordsPanel } from './GiftWordsPanel.tsx';
 import { useHashTarget } from './use-hash-target.ts';
+
+function Chain({ gift }: { gift: GiftChain }) {
+  return (
+    <>
+      <GiftFacts gift={gift} />
+      <GiftWordsPanel giftNumber={gift.number} words={gift.words} />
+      <GiftSteps steps={gift.steps} />
+      <section className="sec" aria-labelledby="books">
+        <h2 id="books">In the books</h2>
+        <GiftBooks entries={gift.entries} />
+        <CardFacts payment={gift.payment} />
+      </section>
+      <GiftLetters mails={gift.mails} />
+      <GiftWordings gift={gift} />
+    </>
+  );
+}
 
 export function GiftPage() {
   const api = useApi();
@@ -37,19 +56,10 @@ export function GiftPage() {
           </p>
         </div>
         {answer.isPending && <WaitingRows words="The gift is on its way." />}
-        {answer.isError && (
+        {answer.isError && !gift && (
           <AskAgain what="The gift" error={answer.error} onAgain={() => void answer.refetch()} />
         )}
-        {gift && (
-          <>
-            <GiftFacts gift={gift} />
-            <GiftWordsPanel giftNumber={gift.number} words={gift.words} />
-            <GiftSteps steps={gift.steps} />
-            <GiftBooks entries={gift.entries} payment={gift.payment} />
-            <GiftLetters mails={gift.mails} />
-            <GiftWordings gift={gift} />
-          </>
-        )}
+        {gift && <Chain gift={gift} />}
       </main>
       <GiftMargin gift={gift} />
     </>

@@ -2,6 +2,7 @@
 import type { GiftFilter, GiftList } from '#shared/giving/desk-schemas.ts';
 import { countGifts } from '#shared/giving/desk-words.ts';
 import { formatLedger } from '#shared/money.ts';
+import { HeadRow } from '#src/ui/HeadRow.tsx';
 import { GiftDayRows } from './GiftDayRows.tsx';
 import { useRowKeys } from './use-row-keys.ts';
 
@@ -11,31 +12,22 @@ const HEADS = [
   { label: 'No.' },
   { label: 'From whom' },
   { label: 'How and for what' },
-  { label: 'Sum £', isNumber: true },
-  { label: 'Gift Aid £', isNumber: true },
+  { label: 'Sum £', className: 'num' },
+  { label: 'Gift Aid £', className: 'num' },
   { label: 'Thanks' },
   { label: 'Words' },
 ];
 
-export function GiftTable({ list, sort }: Props) {
-  const first = list.days[0]?.rows[0]?.number;
+export function GiftTable({ list: { days, total }, sort }: Props) {
+  const first = days[0]?.rows[0]?.number;
   const { current, onKeyDown } = useRowKeys(first === undefined ? undefined : String(first));
-  const { total } = list;
   return (
     <table role="table" className="ruled giftlist" onKeyDown={onKeyDown}>
       <caption className="vh">
         Gifts, {sort === 'largest' ? 'largest first' : `day by day, ${sort} first`}
       </caption>
-      <thead role="rowgroup">
-        <tr role="row">
-          {HEADS.map(({ label, isNumber }) => (
-            <th key={label} role="columnheader" scope="col" className={isNumber ? 'num' : undefined}>
-              {label}
-            </th>
-          ))}
-        </tr>
-      </thead>
-      {list.days.map((day) => (
+      <HeadRow heads={HEADS} />
+      {days.map((day) => (
         <GiftDayRows key={day.day ?? 'all'} day={day} reached={current} />
       ))}
       <tfoot role="rowgroup">

@@ -1,16 +1,39 @@
 // The very words that the giver read: the appeal, the declaration and the question of consent, by version.
+import type { ReactNode } from 'react';
 import type { GiftChain } from '#shared/giving/desk-schemas.ts';
 
 const CHANNELS = { email: 'e-mail', post: 'post', phone: 'telephone' } as const;
 
+function Wording({ name, version, children }: { name: string; version: number; children: ReactNode }) {
+  return (
+    <>
+      <dt>
+        {name}, wording {version}
+      </dt>
+      <dd>{children}</dd>
+    </>
+  );
+}
+
+function Answers({ consents }: Pick<GiftChain, 'consents'>) {
+  return (
+    <ul className="yesno">
+      {consents.map(({ channel, isGiven }) => (
+        <li key={channel}>
+          {CHANNELS[channel]}: <b className={isGiven ? 'yes' : 'no'}>{isGiven ? 'yes' : 'no'}</b>
+        </li>
+      ))}
+    </ul>
+  );
+}
+
 export function GiftWordings({ gift: { appeal, declaration, consents } }: { gift: GiftChain }) {
-  const consent = consents[0];
+  const [consent] = consents;
   return (
     <section className="sec" aria-labelledby="wordings">
       <h2 id="wordings">What the giver read</h2>
       <dl className="wordings">
-        <dt>Appeal, wording {appeal.version}</dt>
-        <dd>
+        <Wording name="Appeal" version={appeal.version}>
           <p>{appeal.purpose}</p>
           <p>
             <b>Should it fall short:</b> {appeal.onShortfall}
@@ -18,30 +41,17 @@ export function GiftWordings({ gift: { appeal, declaration, consents } }: { gift
           <p>
             <b>Should more come:</b> {appeal.onSurplus}
           </p>
-        </dd>
+        </Wording>
         {declaration && (
-          <>
-            <dt>Declaration, wording {declaration.version}</dt>
-            <dd>
-              <p>{declaration.wording}</p>
-            </dd>
-          </>
+          <Wording name="Declaration" version={declaration.version}>
+            <p>{declaration.wording}</p>
+          </Wording>
         )}
         {consent && (
-          <>
-            <dt>Consent, wording {consent.version}</dt>
-            <dd>
-              <p>{consent.wording}</p>
-              <ul className="yesno">
-                {consents.map((one) => (
-                  <li key={one.channel}>
-                    {CHANNELS[one.channel]}:{' '}
-                    <b className={one.isGiven ? 'yes' : 'no'}>{one.isGiven ? 'yes' : 'no'}</b>
-                  </li>
-                ))}
-              </ul>
-            </dd>
-          </>
+          <Wording name="Consent" version={consent.version}>
+            <p>{consent.wording}</p>
+            <Answers consents={consents} />
+          </Wording>
         )}
       </dl>
     </section>
