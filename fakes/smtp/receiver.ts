@@ -1,4 +1,5 @@
 // The mail server's side of the line: speaks SMTP, obeys the mode, hands what it took to the store.
+import { Socket } from 'node:net';
 import { simpleParser } from 'mailparser';
 import { SMTPServer, type SMTPServerDataStream, type SMTPServerSession } from 'smtp-server';
 import { z } from 'zod';
@@ -43,13 +44,13 @@ async function keep(store: LetterStore, session: SMTPServerSession, source: Buff
 }
 
 /** smtp-server has no word for hanging up without an answer, so the line itself is cut. */
-const lineSchema = z.object({ id: z.string(), _socket: z.object({ destroy: z.custom<() => void>() }) });
+const lineSchema = z.object({ id: z.string(), _socket: z.instanceof(Socket) });
 
-function hangUp(server: SMTPServer, session: SMTPServerSession): void {
+/** Cuts the line of one session, or every line. */
+export function hangUp(server: SMTPServer, session?: SMTPServerSession): void {
   for (const connection of server.connections) {
-    const line: unknown = connection;
-    if (lineSchema.parse(line).id !== session.id) continue;
-    z.custom<{ _socket: { destroy(): void } }>().parse(line)._socket.destroy();
+    const line = lineSchema.parse(connection);
+    if (session === undefined || line.id === session.id) line._socket.destroy();
   }
 }
 

@@ -7,9 +7,11 @@ import { simpleParser } from 'mailparser';
 import { openLetterStore, type KeptLetter } from './letter-store.ts';
 import { holdMode, type ModeInput } from './modes.ts';
 import { createPages } from './pages.ts';
-import { createReceiver } from './receiver.ts';
+import { createReceiver, hangUp } from './receiver.ts';
 
 const LOOPBACK = '127.0.0.1';
+/** Until the other side has noticed. */
+const SETTLE_MS = 100;
 
 export type SmtpStandIn = {
   smtpUrl: string;
@@ -19,6 +21,8 @@ export type SmtpStandIn = {
   read(id: string): Promise<{ plain: string; html: string; source: string }>;
   setMode(mode: ModeInput): void;
   clear(): void;
+  /** Cuts every line that stands open, as a server does with idle ones. */
+  hangUp(): Promise<void>;
   stop(): Promise<void>;
 };
 
@@ -55,6 +59,10 @@ export async function startSmtp({ port, pagePort, stateFolder }: SmtpInput): Pro
     },
     setMode: (mode) => void modes.set(mode),
     clear: () => store.clear(),
+    async hangUp() {
+      hangUp(receiver);
+      await new Promise((resolve) => setTimeout(resolve, SETTLE_MS));
+    },
     async stop() {
       pages.closeAllConnections();
       await new Promise((resolve) => pages.close(resolve));

@@ -6,7 +6,7 @@ import { z } from 'zod';
 import { signInSchema } from '#shared/accounts/session-schemas.ts';
 import { needsSecondFactor } from '#shared/roles.ts';
 import type { Deps } from '#server/deps.ts';
-import { Invalid, NotSignedIn } from '#server/platform/errors.ts';
+import { AppError, Invalid, NotSignedIn } from '#server/platform/errors.ts';
 import { parse } from '#server/platform/parse.ts';
 import { requestIdOf } from '#server/platform/problems.ts';
 import { recordAccountDeed, type AccountDeed, type DeedMeta } from './accounts-audit.ts';
@@ -58,10 +58,21 @@ const deedOf = (account: AccountRecord | undefined): AccountDeed => {
   return firstStep(account) === 'signed-in' ? 'signed-in' : 'password-given';
 };
 
+/** Without this, nobody could stay signed in and nobody would know why: a Secure cookie is dropped in silence. */
+function requireTls({ config }: Deps, req: Request): void {
+  if (config.cookie.isSecure && !req.secure)
+    throw new AppError(
+      500,
+      'internal',
+      'The desk opens over https alone: the proxy in front must send X-Forwarded-Proto, and TREENAIL_PROXY_HOPS must count it.',
+    );
+}
+
 /** @throws NotSignedIn with one message for every failure, TooMany while a wait is running. */
 export function createSignIn(deps: Deps, tries: SignInTries) {
   const askPassword = createPasswordQuestion(deps);
   return async (req: Request, res: Response): Promise<void> => {
+    requireTls(deps, req);
     const { email } = parse(signInSchema, req.body);
     const address = req.ip ?? '';
     await tries.begin(email, address);

@@ -41,7 +41,9 @@ const openParts = (standing: Standing) =>
 /** What was typed before, where it still parses field by field, with what the address asks for on top. */
 function typedBefore(kept: Record<string, string>, prefill: Prefill): z.output<typeof answersSchema> {
   const answers: Record<string, string> = {};
-  for (const [field, value] of Object.entries({ ...kept, ...definedOnly(prefill) })) answers[field] = value;
+  // Without script the home page sends its ticked sum along with a written one; what was written is meant.
+  const asked = prefill.other ? { ...prefill, amount: 'other' } : prefill;
+  for (const [field, value] of Object.entries({ ...kept, ...definedOnly(asked) })) answers[field] = value;
   return answersSchema.catch({}).parse(answers);
 }
 const definedOnly = (prefill: Prefill): Record<string, string> =>

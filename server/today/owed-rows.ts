@@ -124,18 +124,36 @@ export function eventRow(event: HangingEvent, now: Date): OwedRow {
   };
 }
 
-export function checkRow(check: FailedCheck, now: Date): OwedRow {
-  const name = check.name.replaceAll('_', ' ');
+const checkName = (check: FailedCheck): string => check.name.replaceAll('_', ' ');
+
+export function failedCheckRow(check: FailedCheck, now: Date): OwedRow {
   const count = check.faults === 1 ? '1 fault' : `${check.faults} faults`;
   return {
     id: `check-${check.name}`,
     ...tellWait(check.ranAt, now, 0),
-    what:
-      check.faults > 0
-        ? `The nightly check “${name}” found ${count}`
-        : `The nightly check “${name}” has not run since ${formatMoment(check.ranAt)}`,
+    what: `The nightly check “${checkName(check)}” found ${count}`,
     owedTo: 'the books',
     detail: check.detail,
     action: { kind: 'look', label: 'See more' },
   };
+}
+
+/** Checks stand still together, most likely because the worker does: one row, not one each. */
+export function stillChecksRow(checks: readonly FailedCheck[], now: Date): OwedRow[] {
+  const [oldest] = checks;
+  if (!oldest) return [];
+  const which =
+    checks.length === 1
+      ? `The nightly check “${checkName(oldest)}” has`
+      : `${checks.length} nightly checks have`;
+  return [
+    {
+      id: 'checks-still',
+      ...tellWait(oldest.ranAt, now, 0),
+      what: `${which} not run since ${formatMoment(oldest.ranAt)}`,
+      owedTo: 'the books',
+      detail: checks.map((one) => `${checkName(one)}, last run ${formatMoment(one.ranAt)}`),
+      action: { kind: 'look', label: 'See more' },
+    },
+  ];
 }

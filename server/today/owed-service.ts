@@ -13,7 +13,7 @@ import {
 import type { Db } from '#server/platform/db.ts';
 import { listOwedMail } from '#server/platform/mail/index.ts';
 import { listFailedChecks } from './check-reads.ts';
-import { checkRow, eventRow, intentRow, mailRow, wordsRow } from './owed-rows.ts';
+import { eventRow, failedCheckRow, intentRow, mailRow, stillChecksRow, wordsRow } from './owed-rows.ts';
 
 const HISTORY_MS = 24 * 60 * 60_000;
 const HISTORY_LINES = 12;
@@ -52,7 +52,11 @@ export async function listOwed(db: Db, person: Reader, now: Date): Promise<OwedR
     ...payments.intents.map((one) => intentRow(one, now)),
     ...payments.events.map((one) => eventRow(one, now)),
     ...letters,
-    ...checks.map((one) => checkRow(one, now)),
+    ...checks.filter((one) => one.faults > 0).map((one) => failedCheckRow(one, now)),
+    ...stillChecksRow(
+      checks.filter((one) => one.faults === 0),
+      now,
+    ),
   ].sort(soonestFirst);
 }
 

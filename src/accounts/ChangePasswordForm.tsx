@@ -27,7 +27,7 @@ export function ChangePasswordForm({ email }: { email: string }) {
     <AccountForm
       {...form}
       name={NAME}
-      label="Change the password"
+      label="Changing it"
       labels={LABELS}
       onSubmit={(event) => void form.submit(event)}
       button="Change it"

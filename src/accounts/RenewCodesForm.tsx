@@ -26,7 +26,7 @@ export function RenewCodesForm() {
     <AccountForm
       {...form}
       name={NAME}
-      label="New recovery codes"
+      label="Renewal"
       labels={{ code: 'One-time code' }}
       onSubmit={(event) => void form.submit(event)}
       button="Make new recovery codes"

@@ -17,7 +17,7 @@ function OneTimeCodeForm() {
     <AccountForm
       {...form}
       name="one-time"
-      label="One-time code"
+      label="Second factor"
       labels={{ code: 'One-time code' }}
       onSubmit={(event) => void form.submit(event)}
       button="Go on"
@@ -50,7 +50,7 @@ function RecoveryCodeForm() {
     <AccountForm
       {...form}
       name="recovery"
-      label="Recovery code"
+      label="Second factor, without the app"
       labels={{ code: 'Recovery code' }}
       onSubmit={(event) => void form.submit(event)}
       button="Go on"

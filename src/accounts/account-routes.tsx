@@ -54,3 +54,15 @@ export const deskLoader =
     if (door !== null) throw redirect(door);
     return session.person;
   };
+
+/** The rooms' own loaders run beside the door's: for a stranger they ask nothing, since it would be refused. */
+export const behindDoor = ({ queryClient, api }: RouteContext, rooms: RouteObject[]): RouteObject[] =>
+  rooms.map((room) => {
+    const { loader } = room;
+    if (typeof loader !== 'function') return room;
+    const guarded: typeof loader = async (args, context) => {
+      const { step } = await queryClient.fetchQuery(sessionQuery(api));
+      return step === 'signed-in' ? loader(args, context) : null;
+    };
+    return { ...room, loader: guarded };
+  });

@@ -1,6 +1,6 @@
 // Puts the desk's rooms together, behind the door that is theirs. Loaded only when somebody comes to the desk.
 import type { RouteObject } from 'react-router-dom';
-import { accountRoutes, deskLoader, doorRoutes } from '#src/accounts/account-routes.tsx';
+import { accountRoutes, behindDoor, deskLoader, doorRoutes } from '#src/accounts/account-routes.tsx';
 import { giftDeskRoutes } from '#src/giving/desk/gift-desk-routes.tsx';
 import { nothingHere } from '#src/lib/page-fault.ts';
 import type { RouteContext } from '#src/lib/route-context.ts';
@@ -25,9 +25,11 @@ export function deskRoutes(context: RouteContext): RouteObject[] {
           id: 'desk-sheets',
           ErrorBoundary: DeskFault,
           children: [
-            ...todayRoutes(context),
-            ...giftDeskRoutes(context),
-            ...accountRoutes(context),
+            ...behindDoor(context, [
+              ...todayRoutes(context),
+              ...giftDeskRoutes(context),
+              ...accountRoutes(context),
+            ]),
             {
               path: '/desk/*',
               loader: () => {

@@ -1,5 +1,5 @@
 // The sheet in the browser: checked on pressing, by the server's own rules; nothing that was written is let go.
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useForm, type FieldErrors, type UseFormReturn } from 'react-hook-form';
 import { useNavigation, useSubmit } from 'react-router-dom';
@@ -25,6 +25,8 @@ export type SheetControls = {
   start: FormTexts;
   faults: FieldFaults;
 };
+
+const CHOICES = ['amount', 'towards', 'dedication', 'wall'] as const;
 
 const schemaOf = (sheet: GiveSheet) =>
   z.preprocess((texts: FormTexts) => keptAnswers(texts), giveRequestSchema({ leastPence: sheet.leastPence }));
@@ -54,6 +56,10 @@ export function useGiveForm({ sheet, faults }: GivePageData, sent: SheetTrouble 
     reValidateMode: 'onSubmit',
     shouldFocusError: false,
   });
+  useEffect(() => {
+    // On registering, the form library takes the choice that was drawn for the one that was made.
+    for (const field of CHOICES) form.setValue(field, written[field]);
+  }, [form, written]);
   const markKept = useQuietKeeping(form.getValues);
   const submit = useSubmit();
   const isWorking = useNavigation().formAction !== undefined;

@@ -74,7 +74,7 @@ function DrawnPartLink({ drawn, part, isShown, onFocusPart }: PartProps) {
       <title>{label}</title>
       <g id={`part-${part.slug}`} className={`part is-${part.state}`}>
         {drawn.paths.map(({ kind, d }) => (
-          <path key={d} className={kind} d={d} />
+          <path key={`${kind} ${d}`} className={kind} d={d} />
         ))}
       </g>
     </Link>

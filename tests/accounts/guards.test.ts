@@ -160,6 +160,20 @@ describe('the cookie behind a proxy that ends TLS', () => {
   });
 });
 
+describe('the cookie behind a proxy that does not say how the visitor came', () => {
+  it('is no silent nothing: the sign-in says what the proxy must send', async () => {
+    const app = await startTestApp({ env: { TREENAIL_PUBLIC_ADDRESS: 'https://lampwoman.example' } });
+    try {
+      const person = await makePerson(app);
+      const answer = await openVisitor(app).signIn(person);
+      expect(answer.status).toBe(500);
+      expect(problemSchema.parse(answer.body).detail).toContain('TREENAIL_PROXY_HOPS');
+    } finally {
+      await app.stop();
+    }
+  });
+});
+
 describe('accounts made for show', () => {
   it('keep a live society from starting until they are switched off', async () => {
     await makePerson(app, { isDemonstration: true });

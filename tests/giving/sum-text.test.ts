@@ -39,20 +39,20 @@ describe('sums that everybody reads alike', () => {
     ['1,000.5', 100_050],
     ['1,234,567.80', 123_456_780],
     ['1 000', 100_000],
-    ['1\u00a0000,50', undefined],
     ['1\u202f234.50', 123_450],
     ["1'000", 100_000],
     ['1’000', 100_000],
     ['1.234,50', 123_450],
     ['\u200b25', 2500],
   ])('%s', (text, value) => {
-    expect(readSum(text)).toEqual(value === undefined ? twoWays(100_050, 10_005_000) : sum(value));
+    expect(readSum(text)).toEqual(sum(value));
   });
 });
 
 test.each([
   ['25,00', twoWays(2500, 250_000)],
   ['25,5', twoWays(2550, 25_500)],
+  ['1\u00a0000,50', twoWays(100_050, 10_005_000)],
   ['1.000', twoWays(100, 100_000)],
   ['20.000', twoWays(2000, 2_000_000)],
   ['1.230', twoWays(123, 123_000)],

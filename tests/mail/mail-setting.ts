@@ -41,8 +41,6 @@ const testConfig = (smtpUrl: string) =>
     TREENAIL_SMTP_URL: smtpUrl,
   });
 
-const mailerTo = (smtpUrl: string): Mailer => createMailer(testConfig(smtpUrl));
-
 async function addAccount(db: Db): Promise<string> {
   const [row] = await db('accounts')
     .insert({
@@ -81,6 +79,12 @@ export async function setUpMail(): Promise<MailSetting> {
   const clock = movableClock();
   clock.moveTo(new Date('2027-05-03T09:30:00Z'));
   let moment = START;
+  const mailers: Mailer[] = [];
+  const mailerTo = (smtpUrl: string): Mailer => {
+    const mailer = createMailer(testConfig(smtpUrl));
+    mailers.push(mailer);
+    return mailer;
+  };
   return {
     db: database.db,
     owner: database.owner,
@@ -92,6 +96,7 @@ export async function setUpMail(): Promise<MailSetting> {
     forward: (minutes) => (moment = new Date(moment.getTime() + minutes * 60_000)),
     addAccount: () => addAccount(database.db),
     async end() {
+      for (const mailer of mailers) mailer.close();
       await smtp.stop();
       await database.drop();
     },

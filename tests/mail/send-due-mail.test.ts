@@ -203,6 +203,20 @@ describe('a mail server that is away', () => {
   });
 });
 
+describe('a line that the server closed meanwhile', () => {
+  it('leaves no doubt about the next letter, which goes out soon after', async () => {
+    await queueOne(setting.db);
+    await send();
+    await setting.smtp.hangUp();
+    const id = await queueOne(setting.db);
+    await send();
+    setting.forward(1);
+    await send();
+    expect((await rowOf(setting.db, id)).state).toBe('sent');
+    expect(setting.smtp.messages()).toHaveLength(2);
+  });
+});
+
 describe('a letter that must not go out after all', () => {
   it('is held back at the hand-over with the reason', async () => {
     const id = await queueOne(setting.db);

@@ -1,5 +1,5 @@
 // Hands one message to the mail server. One recipient a message, envelope set apart from what is shown.
-import { Readable } from 'node:stream';
+import type { Readable } from 'node:stream';
 import nodemailer from 'nodemailer';
 import type { Config } from '../config.ts';
 import { readFailure, type HandOverFailure } from './read-failure.ts';
@@ -27,10 +27,13 @@ const SILENCE_TIMEOUT_MS = 60_000;
 /** Shorter than the lease of a row being handed over, so that we know its fate before others doubt it. */
 const HAND_OVER_TIMEOUT_MS = 100_000;
 
-// A connection a letter: a pool sends a letter again by itself when its connection closes before the answer,
-// and then one person may have it twice.
 const transportOptions = (config: Config) => ({
   url: config.mail.smtpUrl,
+  pool: true as const,
+  maxConnections: 2,
+  // The library would put a letter in its queue again when the line breaks. Whether to try again is decided
+  // in the outbox alone, where it is written down.
+  maxRequeues: 0,
   disableFileAccess: true,
   disableUrlAccess: true,
   connectionTimeout: CONNECT_TIMEOUT_MS,
@@ -39,27 +42,22 @@ const transportOptions = (config: Config) => ({
   socketTimeout: SILENCE_TIMEOUT_MS,
 });
 
-/** Read only once the server has asked for the text, and says so then. */
-async function* watched(text: Readable, onBegin: () => void): AsyncGenerator<Buffer> {
-  onBegin();
-  yield* text as AsyncIterable<Buffer>;
-}
-
 export function createMailer(config: Config): Mailer {
+  const transport = nodemailer.createTransport(transportOptions(config));
+  /** The texts of letters under way: one that was never read from cannot have left for the server. */
+  const texts = new Map<string, Readable>();
+  transport.use('stream', (mail, next) => {
+    const readText = mail.message.createReadStream.bind(mail.message);
+    mail.message.createReadStream = (options) => {
+      const text = readText(options);
+      if (mail.data.messageId) texts.set(mail.data.messageId, text);
+      return text;
+    };
+    next();
+  });
   return {
     fromAddress: config.mail.from,
     async send(letter, fromName) {
-      let hasBegun = false;
-      const transport = nodemailer.createTransport(transportOptions(config));
-      transport.use('stream', (mail, next) => {
-        const readText = mail.message.createReadStream.bind(mail.message);
-        mail.message.createReadStream = (options) =>
-          Readable.from(
-            watched(readText(options), () => (hasBegun = true)),
-            { objectMode: false },
-          );
-        next();
-      });
       try {
         const info = await transport.sendMail({
           messageId: letter.messageId,
@@ -74,9 +72,11 @@ export function createMailer(config: Config): Mailer {
         });
         return { kind: 'taken', response: info.response };
       } catch (error) {
-        return readFailure(error, hasBegun);
+        return readFailure(error, texts.get(letter.messageId)?.readableDidRead ?? false);
+      } finally {
+        texts.delete(letter.messageId);
       }
     },
-    close: () => undefined,
+    close: () => transport.close(),
   };
 }
