@@ -10,6 +10,8 @@ export async function up(knex: Knex): Promise<void> {
       pronoun text not null default 'her',
       lead text not null,
       place text not null,
+      -- What common sums buy, told beside the sums.
+      what_sums_buy text not null default '',
       goal_pence bigint not null check (goal_pence > 0),
       fund_id uuid not null references funds,
       published_at timestamptz

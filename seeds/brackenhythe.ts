@@ -127,6 +127,8 @@ async function seedCampaign(trx: Trx, startDay: Day): Promise<string> {
     name: 'The Lampwoman',
     pronoun: 'her',
     place: 'Hythe Green',
+    whatSumsBuy:
+      '£5 is one oak peg, turned and driven. £20 is a foot of green oak. £60 is a morning of the carver.',
     goalPence: GOAL,
     fundId: fund.id,
     lead: 'For forty years one woman rowed out at dusk and lit the river lamp, so that the boats came home. We are building her in green oak, 7.2 metres tall, to stand on Hythe Green with her lantern up. The town pays for her, peg by peg.',

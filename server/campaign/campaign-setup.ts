@@ -10,6 +10,7 @@ export type NewCampaign = {
   pronoun: string;
   lead: string;
   place: string;
+  whatSumsBuy: string;
   goalPence: Pence;
   fundId: string;
 };
@@ -22,6 +23,7 @@ export async function addCampaign(trx: Trx, campaign: NewCampaign): Promise<stri
       pronoun: campaign.pronoun,
       lead: campaign.lead,
       place: campaign.place,
+      what_sums_buy: campaign.whatSumsBuy,
       goal_pence: campaign.goalPence,
       fund_id: campaign.fundId,
     })

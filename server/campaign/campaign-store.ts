@@ -15,6 +15,7 @@ const campaignRow = z.object({
   pronoun: z.string(),
   lead: z.string(),
   place: z.string(),
+  what_sums_buy: z.string(),
   goal_pence: penceColumn,
   fund_id: z.string(),
   published_at: z.date().nullable(),
@@ -25,6 +26,7 @@ export type CampaignRecord = {
   pronoun: string;
   lead: string;
   place: string;
+  whatSumsBuy: string;
   goalPence: Pence;
   fundId: string;
   publishedAt: Date | null;
@@ -43,6 +45,7 @@ export async function getCampaign(db: Db): Promise<CampaignRecord> {
     pronoun: row.pronoun,
     lead: row.lead,
     place: row.place,
+    whatSumsBuy: row.what_sums_buy,
     goalPence: row.goal_pence,
     fundId: row.fund_id,
     publishedAt: row.published_at,

@@ -1,5 +1,5 @@
 // The sheet as it is filled in: what was typed is kept first, right or wrong, and judged afterwards.
-import { GIVE_FIELDS, giveRequestSchema, type GiveFormFilled } from '#shared/giving/give-schemas.ts';
+import { giveRequestSchema, keptAnswers, type GiveFormFilled } from '#shared/giving/give-schemas.ts';
 import { isFull } from '#shared/campaign/reach-rules.ts';
 import { fieldFaults, type FieldFaults } from '#shared/errors.ts';
 import type { Deps } from '#server/deps.ts';
@@ -7,21 +7,6 @@ import { Invalid } from '#server/platform/errors.ts';
 import { getGivingSettings, isGiftAidOffered } from '#server/society/index.ts';
 import { keepDraft } from './draft-store.ts';
 import { readStanding, type Standing } from './standing.ts';
-
-/** Longer than any field may be, so that even a far too long answer comes back to be shortened. */
-const MOST_KEPT = 2_000;
-
-/** What was typed, as text, in the fields that the sheet has; anything else is not ours to keep. */
-export function typedAnswers(body: unknown): Record<string, string> {
-  if (typeof body !== 'object' || body === null) return {};
-  const typed: Record<string, string> = {};
-  for (const field of GIVE_FIELDS) {
-    const value: unknown = Object.getOwnPropertyDescriptor(body, field)?.value;
-    // PostgreSQL's json holds no NUL; the check of control characters still sees the rest.
-    if (typeof value === 'string') typed[field] = value.slice(0, MOST_KEPT).replaceAll('\u0000', '');
-  }
-  return typed;
-}
 
 type Rules = {
   standing: Standing;
@@ -67,7 +52,7 @@ export async function writeDraft(deps: Deps, token: string, body: unknown, isQui
   const verdict = isQuiet ? undefined : judgeAnswers(body, await readRules(deps));
   await deps.db.transaction((trx) =>
     keepDraft(trx, token, {
-      answers: typedAnswers(body),
+      answers: keptAnswers(body),
       isComplete: verdict?.answers !== undefined,
       at: deps.clock.now(),
     }),

@@ -143,6 +143,9 @@ function mailSteps(mail: GiftMail): GiftStep[] {
 
 const RANK: Record<GiftStep['kind'], number> = { seen: 0, payment: 1, gift: 2, books: 3, words: 4, mail: 5 };
 
+/** The card service tells whole seconds; what falls into one second is told in its natural order. */
+const secondOf = (step: GiftStep): string => step.at.slice(0, 'YYYY-MM-DDTHH:mm:ss'.length);
+
 export function tellSteps(gift: Told, begunAt: Date, events: readonly PaymentEvent[]): GiftStep[] {
   const steps = [
     seenStep(gift, begunAt),
@@ -152,5 +155,7 @@ export function tellSteps(gift: Told, begunAt: Date, events: readonly PaymentEve
     ...gift.words.flatMap(wordsSteps),
     ...gift.mails.flatMap(mailSteps),
   ];
-  return steps.sort((one, other) => one.at.localeCompare(other.at) || RANK[one.kind] - RANK[other.kind]);
+  return steps.sort(
+    (one, other) => secondOf(one).localeCompare(secondOf(other)) || RANK[one.kind] - RANK[other.kind],
+  );
 }

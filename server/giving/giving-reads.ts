@@ -1,14 +1,13 @@
 // What the giver's pages show: the sheet, the check before paying, and how it came out.
-import type { z } from 'zod';
 import { formatTime, dayOf } from '#shared/dates.ts';
 import { giftAidOn } from '#shared/declarations/gift-aid-rules.ts';
 import { DECLARATION_NOTICE } from '#shared/declarations/statutory-wording.ts';
 import {
   chosenSum,
   giveCheckSchema,
-  giveFormSchema,
   giveOutcomeSchema,
   giveSheetSchema,
+  keptAnswers,
   type GiveCheck,
   type GiveFormFilled,
   type GiveOutcome,
@@ -28,7 +27,6 @@ import { readReceipt, receiptNumber } from './receipt-reads.ts';
 import { fetchSession, settleSession } from './settle-session.ts';
 import type { Standing } from './standing.ts';
 
-const answersSchema = giveFormSchema.partial();
 type Prefill = { towards?: string | undefined; amount?: string | undefined; other?: string | undefined };
 
 const openParts = (standing: Standing) =>
@@ -38,13 +36,11 @@ const openParts = (standing: Standing) =>
     return isOpen ? [{ slug: part.slug, name: part.name, stillNeededPence: reached.stillNeededPence }] : [];
   });
 
-/** What was typed before, where it still parses field by field, with what the address asks for on top. */
-function typedBefore(kept: Record<string, string>, prefill: Prefill): z.output<typeof answersSchema> {
-  const answers: Record<string, string> = {};
+/** What was typed before, with what the address asks for on top. */
+function typedBefore(kept: Record<string, string>, prefill: Prefill): GiveSheet['answers'] {
   // Without script the home page sends its ticked sum along with a written one; what was written is meant.
   const asked = prefill.other ? { ...prefill, amount: 'other' } : prefill;
-  for (const [field, value] of Object.entries({ ...kept, ...definedOnly(asked) })) answers[field] = value;
-  return answersSchema.catch({}).parse(answers);
+  return keptAnswers({ ...kept, ...definedOnly(asked) });
 }
 const definedOnly = (prefill: Prefill): Record<string, string> =>
   Object.fromEntries(
@@ -74,6 +70,7 @@ export async function readSheet(deps: Deps, token: string | undefined, prefill: 
     leastPence: rules.leastPence,
     stillNeededPence: stillNeeded(rules.standing),
     openParts: openParts(rules.standing),
+    whatSumsBuy: rules.standing.campaign.whatSumsBuy,
     partChoice: wording.partChoice,
     giftAid,
     consentWording: consent.words,
@@ -128,6 +125,7 @@ export async function readCheck(deps: Deps, token: string | undefined): Promise<
     sumPence: sum.pence,
     giftAidPence: isDeclared ? giftAidOn(sum.pence, dayOf(now)) : NOTHING,
     isDeclared,
+    giftAidOffered: rules.isGiftAidOffered,
     towards: towardsOf(rules.standing, verdict.answers),
     answers: verdict.answers,
     saidBack: await saidBack(deps, draft.id, sum.pence),

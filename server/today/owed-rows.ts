@@ -34,8 +34,9 @@ const giftPath = (number: number, place: string): string => `/desk/gifts/${numbe
 function whatWords(words: UnreadWords): string {
   if (words.words === null)
     return `Words ${WORDS_KIND_WORDS[words.kind]} with gift ${words.giftNumber}: the treasurer reads them`;
-  const told = words.hasContact ? ' The family is told once they are passed.' : '';
-  return `Words to read, ${WORDS_KIND_WORDS[words.kind]}: “${words.words}”.${told}`;
+  const stop = /[.!?]$/.test(words.words) ? '' : '.';
+  const told = words.hasContact ? `${stop} The family is told once they are passed.` : '';
+  return `Words to read, ${WORDS_KIND_WORDS[words.kind]}: “${words.words}”${told}`;
 }
 
 export function wordsRow(words: UnreadWords, now: Date, mayJudge: boolean): OwedRow {
@@ -67,13 +68,22 @@ const MAIL_FAULTS: Record<string, string> = {
   claimed: 'has not been sent: the worker may be standing still',
 };
 
-export function mailRow(mail: MailLine, about: LetterSubject | undefined, now: Date): OwedRow {
+/** `mayAct`: a letter to a hidden giver is the treasurer's to decide; others only learn that it waits. */
+export function mailRow(
+  mail: MailLine,
+  about: LetterSubject | undefined,
+  { now, mayAct }: { now: Date; mayAct: boolean },
+): OwedRow {
   const fault = MAIL_FAULTS[mail.state] ?? 'has not gone';
   const isThanks = mail.kind === 'gift-thanks';
   const name = isThanks ? 'The thank-you' : 'A letter';
   const of = about ? ` for ${formatPence(about.sumPence)}, gift ${about.giftNumber},` : '';
   const action: OwedRow['action'] = about
-    ? { kind: 'open', label: 'Decide', path: giftPath(about.giftNumber, 'letters') }
+    ? {
+        kind: 'open',
+        label: mayAct ? 'Decide' : `See gift ${about.giftNumber}`,
+        path: giftPath(about.giftNumber, 'letters'),
+      }
     : { kind: 'look', label: 'See more' };
   return {
     id: `mail-${mail.id}`,

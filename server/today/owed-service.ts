@@ -24,13 +24,10 @@ const mayReadGifts = (person: Reader): boolean =>
 async function owedLetters(db: Db, person: Reader, now: Date): Promise<OwedRow[]> {
   const mails = await listOwedMail(db, now);
   const subjects = await listLetterSubjects(db, [...new Set(mails.map((mail) => mail.subjectId))], person);
-  return mails.map((mail) =>
-    mailRow(
-      mail,
-      subjects.find((one) => one.subjectId === mail.subjectId),
-      now,
-    ),
-  );
+  return mails.map((mail) => {
+    const about = subjects.find((one) => one.subjectId === mail.subjectId);
+    return mailRow(mail, about, { now, mayAct: about !== undefined && mayAct(person, about.isWithheld) });
+  });
 }
 
 const soonestFirst = (one: OwedRow, other: OwedRow): number =>

@@ -201,6 +201,8 @@ export const giveSheetSchema = z.object({
   leastPence: penceSchema,
   stillNeededPence: penceSchema,
   openParts: z.array(z.object({ slug: z.string(), name: z.string(), stillNeededPence: penceSchema })),
+  /** What common sums buy, in the campaign's own words. */
+  whatSumsBuy: z.string(),
   partChoice: z.enum(['wish', 'fund']),
   giftAid: z.union([z.object({ wording: z.string(), notice: z.string() }), z.null()]),
   consentWording: z.string(),
@@ -216,7 +218,7 @@ export const giveCheckSchema = z.object({
   giftAidPence: penceSchema,
   isDeclared: z.boolean(),
   /** False when the sheet had no declaration to tick; then nothing is said of Gift Aid. */
-  giftAidOffered: z.boolean().optional(),
+  giftAidOffered: z.boolean(),
   towards: z.object({
     slug: z.union([z.string(), z.null()]),
     name: z.string(),

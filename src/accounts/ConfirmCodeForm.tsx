@@ -21,7 +21,7 @@ export function ConfirmCodeForm({ onCodes }: { onCodes: (codes: readonly string[
       label="Confirm the second factor"
       labels={{ code: 'Code in the app' }}
       onSubmit={(event) => void form.submit(event)}
-      button="It shows a code"
+      button="Confirm it"
       workingWords="Looking at the code …"
     >
       <AccountField

@@ -12,7 +12,9 @@ export function RunOutNotice({ step, email }: Props) {
   useEffect(() => {
     const shown = dialog.current;
     if (shown && !shown.open) shown.showModal();
-  }, []);
+    // The address is known already: the next thing to write is the password, then the code.
+    shown?.querySelector<HTMLInputElement>('input:not([type=email])')?.focus();
+  }, [step]);
   return (
     // Escape would leave a page that looks alive and keeps nothing.
     <dialog

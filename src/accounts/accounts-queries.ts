@@ -52,7 +52,15 @@ function useSend<Answer, Body>(
 export const useSignIn = () => useSend<Session, SignInForm>(sessionSchema, '/api/session', keepSession);
 
 export const useGiveCode = () =>
-  useSend<Session, { code: string }>(sessionSchema, '/api/session/second-factor', keepSession);
+  useSend<Session, { code: string }>(
+    sessionSchema,
+    '/api/session/second-factor',
+    async (queryClient, session) => {
+      await keepSession(queryClient, session);
+      // A recovery code may have been used up.
+      await queryClient.invalidateQueries({ queryKey: ACCOUNT_KEY });
+    },
+  );
 
 export const useBeginSecondFactor = () =>
   useSend<z.infer<typeof secondFactorOfferSchema>, { password?: string; code?: string }>(

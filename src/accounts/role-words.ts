@@ -10,4 +10,7 @@ const WORDS: Record<Role, string> = {
   examiner: 'examiner',
 };
 
-export const roleWords = (roles: readonly Role[]): string => roles.map((role) => WORDS[role]).join(', ');
+const list = new Intl.ListFormat('en-GB');
+
+/** “treasurer and secretary” */
+export const roleWords = (roles: readonly Role[]): string => list.format(roles.map((role) => WORDS[role]));

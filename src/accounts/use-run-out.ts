@@ -40,5 +40,12 @@ export function useRunOut(person: Person): Exclude<SessionStep, 'signed-in'> | n
     if (email !== person.email) window.location.reload();
   }, [email, person.email]);
 
+  const step = session?.step;
+  useEffect(() => {
+    // What was refused meanwhile is asked again.
+    if (step === 'signed-in')
+      void queryClient.invalidateQueries({ predicate: ({ state }) => state.status === 'error' });
+  }, [step, queryClient]);
+
   return session === undefined || session.step === 'signed-in' ? null : session.step;
 }

@@ -10,7 +10,9 @@ const SUMS = [
   { value: '60', words: '£60' },
 ] as const;
 
-export function AmountRow({ controls, number }: { controls: SheetControls; number: number }) {
+type Props = { controls: SheetControls; note: string; number: number };
+
+export function AmountRow({ controls, note, number }: Props) {
   const { form, start, faults } = controls;
   const [setAside, keepAside] = useState('');
   const chooseSum = (event: ChangeEvent<HTMLInputElement>) => {
@@ -27,11 +29,7 @@ export function AmountRow({ controls, number }: { controls: SheetControls; numbe
     if (event.target.value !== '') form.setValue('amount', 'other');
   };
   return (
-    <SheetRow
-      number={number}
-      heading="How much"
-      note="£5 is one oak peg, turned and driven. £20 is a foot of green oak. £60 is a morning of the carver."
-    >
+    <SheetRow number={number} heading="How much" note={note}>
       <SumRow
         legend="How much"
         sums={SUMS}

@@ -73,7 +73,7 @@ export function GivePage() {
         noValidate
         onSubmit={(event) => void press(event)}
       >
-        <AmountRow controls={controls} number={1} />
+        <AmountRow controls={controls} note={sheet.whatSumsBuy} number={1} />
         <TowardsRow controls={controls} sheet={sheet} number={2} />
         <DedicationRow controls={controls} number={3} />
         <WallRow controls={controls} number={4} />

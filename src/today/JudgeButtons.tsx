@@ -7,6 +7,13 @@ import { TODAY } from './today-queries.ts';
 
 type Props = { action: Extract<OwedAction, { kind: 'judge' }>; isNext: boolean };
 
+/** The row that had the cursor has left the list: the next thing to do gets it, or the page when all is done. */
+function focusNextThing(): void {
+  if (document.activeElement !== document.body && document.activeElement !== null) return;
+  const next = document.querySelector<HTMLElement>('.daylist .do :is(a, button)');
+  (next ?? document.getElementById('sheet'))?.focus();
+}
+
 export function JudgeButtons({ action, isNext }: Props) {
   const queryClient = useQueryClient();
   const judge = useJudgeWords();
@@ -14,7 +21,7 @@ export function JudgeButtons({ action, isNext }: Props) {
   const decide = (verdict: 'passed' | 'held') => () =>
     judge.mutate(
       { giftNumber: action.giftNumber, wordsId: action.wordsId, verdict },
-      { onSettled: () => void queryClient.invalidateQueries({ queryKey: TODAY }) },
+      { onSettled: () => void queryClient.invalidateQueries({ queryKey: TODAY }).then(focusNextThing) },
     );
   return (
     <>

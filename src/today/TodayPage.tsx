@@ -10,6 +10,7 @@ import { WaitingRows } from '#src/ui/WaitingRows.tsx';
 import { Headpiece } from './Headpiece.tsx';
 import { OwedTable } from './OwedTable.tsx';
 import { todayQuery } from './today-queries.ts';
+import { VerdictTold } from './VerdictTold.tsx';
 
 function TodayMargin({ history }: { history: Today['history'] }) {
   const items = history.map(({ at, words, giftNumber }) => ({
@@ -47,6 +48,7 @@ export function TodayPage() {
           <AskAgain what="What is owed" error={answer.error} onAgain={() => void answer.refetch()} />
         )}
         {today && <OwedTable day={today.day} rows={today.rows} />}
+        <VerdictTold />
         {today?.rows.length === 0 && (
           <p className="after">
             Every giver is thanked, every payment is in the books, and all words are read.{' '}

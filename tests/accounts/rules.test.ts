@@ -2,6 +2,7 @@
 import express from 'express';
 import { generate } from 'otplib';
 import fc from 'fast-check';
+import QRCode from 'qrcode';
 import supertest from 'supertest';
 import { describe, expect, it } from 'vitest';
 import { isCommonPassword, newPasswordSchema, repeatsPerson } from '#shared/accounts/password-rules.ts';
@@ -94,12 +95,16 @@ describe('codes', () => {
       );
     expect(await findTimeStep(secret, await generate({ secret, epoch: now - 120 }))).toBeUndefined();
   });
-  it('come with a picture whose squares are drawn row by row', () => {
+  it('come with a picture that draws every dark square once and no other', () => {
     const { uri, picture } = describeSecret('JBSWY3DPEHPK3PXP', 'a@b.example');
     expect(uri).toBe('otpauth://totp/Treenail:a%40b.example?secret=JBSWY3DPEHPK3PXP&issuer=Treenail');
-    // Every such picture has its finder pattern, seven squares wide, in the first row at both ends.
-    expect(picture.path.startsWith('M0 0h7v1h-7z')).toBe(true);
-    expect(picture.path).toContain(`M${picture.size - 7} 0h7v1h-7z`);
+    const { size, data } = QRCode.create(uri, { errorCorrectionLevel: 'M' }).modules;
+    const dark = [...data].flatMap((isDark, at) => (isDark ? [`${at % size} ${Math.floor(at / size)}`] : []));
+    const drawn = [...picture.path.matchAll(/M(\d+) (\d+)h(\d+)v1h-(\d+)z/g)].flatMap(([, x, y, width]) =>
+      Array.from({ length: Number(width) }, (_, step) => `${Number(x) + step} ${y}`),
+    );
+    expect(picture.size).toBe(size);
+    expect(drawn).toEqual(dark);
   });
   it('for recovery are written as they are read: case, spaces and dashes do not matter', () => {
     for (const code of newRecoveryCodes()) {

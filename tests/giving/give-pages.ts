@@ -24,6 +24,7 @@ export const SHEET: GiveSheet = {
   partChoice: 'wish',
   giftAid: { wording: 'The words that are declared.', notice: 'The notice beside them.' },
   consentWording: 'You may write to me.',
+  whatSumsBuy: '£5 is one peg.',
   answers: {},
 };
 
@@ -33,6 +34,7 @@ export const CHECK: GiveCheck = {
   sumPence: pence(6000),
   giftAidPence: pence(1500),
   isDeclared: true,
+  giftAidOffered: true,
   towards: { slug: 'head-and-scarf', name: 'Head and scarf', stillNeededPence: pence(939_000) },
   answers: giveFormSchema.parse({
     amount: '60',

@@ -1,7 +1,13 @@
-// One choice within the filter's sentence.
-type Props = { name: string; label: string; value: string; options: readonly (readonly [string, string])[] };
+// One choice within the filter's sentence, with the stop that follows it.
+type Props = {
+  name: string;
+  label: string;
+  value: string;
+  options: readonly (readonly [string, string])[];
+  stop?: string;
+};
 
-export function FilterChoice({ name, label, value, options }: Props) {
+export function FilterChoice({ name, label, value, options, stop }: Props) {
   return (
     <label>
       <span className="vh">{label}</span>
@@ -12,6 +18,7 @@ export function FilterChoice({ name, label, value, options }: Props) {
           </option>
         ))}
       </select>
+      <span aria-hidden="true">{stop}</span>
     </label>
   );
 }

@@ -52,10 +52,11 @@ export function GiftFilterForm({ filter, parts, onFault }: Props) {
         </label>{' '}
         <label>
           until <input type="date" name="to" defaultValue={filter.to} />
-        </label>
-        , <FilterChoice name="thanks" label="Thanks" value={filter.thanks} options={THANKS} />,{' '}
-        <FilterChoice name="words" label="Words" value={filter.words} options={WORDS} />,{' '}
-        <FilterChoice name="sort" label="Order" value={filter.sort} options={ORDERS} />.{' '}
+          <span aria-hidden="true">,</span>
+        </label>{' '}
+        <FilterChoice name="thanks" label="Thanks" value={filter.thanks} options={THANKS} stop="," />{' '}
+        <FilterChoice name="words" label="Words" value={filter.words} options={WORDS} stop="," />{' '}
+        <FilterChoice name="sort" label="Order" value={filter.sort} options={ORDERS} stop="." />{' '}
         <button className="act" type="submit">
           Show
         </button>

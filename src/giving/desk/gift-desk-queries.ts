@@ -33,10 +33,14 @@ export const giftsCsvPath = (filter: GiftFilter): string =>
 
 type Judgement = JudgeWords & { giftNumber: number; wordsId: string };
 
+/** A page that outlives the row it was pressed in finds the verdict under this key. */
+export const JUDGE_WORDS = [...GIVING, 'judge-words'] as const;
+
 export function useJudgeWords() {
   const api = useApi();
   const queryClient = useQueryClient();
   return useMutation({
+    mutationKey: JUDGE_WORDS,
     mutationFn: ({ giftNumber, wordsId, verdict }: Judgement) =>
       api.send(doneSchema, `/api/desk/gifts/${giftNumber}/words/${wordsId}`, { body: { verdict } }),
     // Asked anew after a refusal too: most likely somebody else was quicker, and the page should say so.
