@@ -192,6 +192,7 @@ export async function seedDemonstration(deps: SeedDeps, input: SeedInput): Promi
     );
     const run: Run = { deps, controls, town, chance: createChance(input.seed), input };
     await giveAll(run);
+    deps.clock.moveTo(standingMoment(input.lastDay));
     const results = await runChecks(deps.db);
     await deps.db.transaction((trx) => keepCheckRun(trx, results, deps.clock.now()));
     const faults = results.flatMap((one) => one.faults.map((fault) => `${one.name}: ${fault.fault}`));
@@ -207,3 +208,6 @@ export async function seedDemonstration(deps: SeedDeps, input: SeedInput): Promi
 }
 
 const isToday = (day: Day): boolean => day === dayOf(new Date());
+/** Where the clock stands when all is given: now, or the evening of a day that was asked for. */
+const standingMoment = (lastDay: Day): Date =>
+  isToday(lastDay) ? new Date() : new Date(`${lastDay}T20:00:00Z`);

@@ -37,7 +37,9 @@ export function settleAnswers(answers: GiveFormFilled): GiveFormFilled {
 }
 
 /** The intent for the draft as it stands: the open one when nothing changed, so that a second press is harmless. */
-async function startIntent(deps: Deps, trx: Trx, token: string | undefined): Promise<GiftIntent> {
+type Started = { intent: GiftIntent; campaignName: string };
+
+async function startIntent(deps: Deps, trx: Trx, token: string | undefined): Promise<Started> {
   const draft = await lockDraft(trx, token);
   if (!draft) throw new Conflict('There is nothing to pay yet. Fill in the sheet first.', 'no-draft');
   const rules = await readRules(deps);
@@ -48,6 +50,7 @@ async function startIntent(deps: Deps, trx: Trx, token: string | undefined): Pro
     throw new Conflict('Some answers need putting right first.', 'incomplete');
   }
   const answers = settleAnswers(verdict.answers);
+  const campaignName = rules.standing.campaign.name;
   const now = deps.clock.now();
   const open = await findOpenIntentOf(trx, draft.id);
   const isStillGood =
@@ -55,11 +58,11 @@ async function startIntent(deps: Deps, trx: Trx, token: string | undefined): Pro
     (open.sessionExpiresAt === null
       ? now.getTime() - open.createdAt.getTime() < KEY_HOLDS_MS
       : open.sessionExpiresAt > now);
-  if (open && isStillGood && sameAnswers(open.answers, answers)) return open;
+  if (open && isStillGood && sameAnswers(open.answers, answers)) return { intent: open, campaignName };
   const sum = chosenSum(answers, { leastPence: rules.leastPence });
   if ('fault' in sum) throw new Conflict(sum.fault, 'incomplete');
   const appeal = await getAppealWording(trx, rules.standing.campaign.id, now);
-  return addIntent(trx, {
+  const intent = await addIntent(trx, {
     draftId: draft.id,
     amountPence: sum.pence,
     partId: rules.standing.parts.find((part) => part.slug === answers.towards)?.id ?? null,
@@ -69,6 +72,7 @@ async function startIntent(deps: Deps, trx: Trx, token: string | undefined): Pro
     answers,
     createdAt: now,
   });
+  return { intent, campaignName };
 }
 
 /** What the payment service is asked; the intent's id stands in every place that comes back to us. */
@@ -140,8 +144,7 @@ export async function beginCheckout(
   deps: Deps,
   token: string | undefined,
 ): Promise<{ url: string; intentId: string }> {
-  const intent = await deps.db.transaction((trx) => startIntent(deps, trx, token));
+  const { intent, campaignName } = await deps.db.transaction((trx) => startIntent(deps, trx, token));
   if (intent.sessionUrl) return { url: intent.sessionUrl, intentId: intent.id };
-  const { standing } = await readRules(deps);
-  return { url: await askForSession(deps, intent, standing.campaign.name), intentId: intent.id };
+  return { url: await askForSession(deps, intent, campaignName), intentId: intent.id };
 }

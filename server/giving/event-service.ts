@@ -3,18 +3,24 @@ import type { Deps } from '#server/deps.ts';
 import { reportError } from '#server/platform/problems.ts';
 import { claimEvents, closeEvent, putOffEvent, type InboxEvent } from './event-store.ts';
 import { fetchPayment, postFeeOfPayment } from './fee-service.ts';
-import { findIntentByReference } from './intent-store.ts';
+import { isFeePosted } from './gift-store.ts';
+import { findIntentByReference, findIntentBySession } from './intent-store.ts';
 import { fetchSession, settleSession } from './settle-session.ts';
-import { paymentOfCharge } from './payment-lookup.ts';
 
-const BATCH = 20;
+/** Taken at once, and worked side by side; fewer than the pool has connections. */
+const BATCH = 4;
 const MOST_TRIES = 12;
 
 type Verdict = { state: 'worked' | 'ignored' | 'refused'; fault: string | null };
 const WORKED: Verdict = { state: 'worked', fault: null };
 
-/** Snapshots may arrive late or out of order, so each event only says what to look at afresh. */
+/**
+ * Snapshots may arrive late or out of order, so each event only says what to look at afresh; and when all that
+ * it could tell is done already, nobody need be asked.
+ */
 async function workSessionEvent(deps: Deps, sessionId: string): Promise<Verdict> {
+  const known = await findIntentBySession(deps.db, sessionId);
+  if (known?.state === 'paid') return WORKED;
   const session = await fetchSession(deps, sessionId);
   const intent = session.client_reference_id
     ? await findIntentByReference(deps.db, session.client_reference_id)
@@ -28,16 +34,16 @@ async function workSessionEvent(deps: Deps, sessionId: string): Promise<Verdict>
   return WORKED;
 }
 
-async function workChargeEvent(deps: Deps, chargeId: string): Promise<Verdict> {
-  const paymentId = await paymentOfCharge(deps, chargeId);
-  if (paymentId) await postFeeOfPayment(deps, await fetchPayment(deps, paymentId));
+/** The fee's balance transaction comes after the payment; this is how we hear of it. */
+async function workChargeEvent(deps: Deps, paymentId: string | null): Promise<Verdict> {
+  if (paymentId && !(await isFeePosted(deps.db, paymentId)))
+    await postFeeOfPayment(deps, await fetchPayment(deps, paymentId));
   return WORKED;
 }
 
 async function workEvent(deps: Deps, event: InboxEvent): Promise<Verdict> {
   if (event.type.startsWith('checkout.session.')) return workSessionEvent(deps, event.objectId);
-  if (event.type === 'charge.updated' || event.type === 'charge.succeeded')
-    return workChargeEvent(deps, event.objectId);
+  if (event.type === 'charge.updated') return workChargeEvent(deps, event.paymentId);
   return { state: 'ignored', fault: null };
 }
 
@@ -65,6 +71,6 @@ export async function workPaymentEvents(deps: Deps): Promise<number> {
     const events = await deps.db.transaction((trx) => claimEvents(trx, BATCH));
     if (events.length === 0) return taken;
     taken += events.length;
-    for (const event of events) await workOne(deps, event);
+    await Promise.all(events.map((event) => workOne(deps, event)));
   }
 }

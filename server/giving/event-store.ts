@@ -2,7 +2,14 @@
 import { z } from 'zod';
 import { queryRows, type Db, type Trx } from '#server/platform/db.ts';
 
-export type InboxEvent = { id: string; type: string; objectId: string; tries: number };
+/** `paymentId` is the payment that the event's object names, and never changes once it does. */
+export type InboxEvent = {
+  id: string;
+  type: string;
+  objectId: string;
+  paymentId: string | null;
+  tries: number;
+};
 
 export type NewEvent = {
   id: string;
@@ -36,7 +43,13 @@ export async function keepEvent(trx: Trx, event: NewEvent): Promise<boolean> {
   return kept.length > 0;
 }
 
-const claimedRow = z.object({ id: z.string(), type: z.string(), object_id: z.string(), tries: z.number() });
+const claimedRow = z.object({
+  id: z.string(),
+  type: z.string(),
+  object_id: z.string(),
+  payment_id: z.string().nullable(),
+  tries: z.number(),
+});
 
 /** Takes waiting events for two minutes by the database's own clock; a dead worker's come free again. */
 export async function claimEvents(trx: Trx, limit: number): Promise<InboxEvent[]> {
@@ -48,10 +61,16 @@ export async function claimEvents(trx: Trx, limit: number): Promise<InboxEvent[]
        select id from payment_events
        where state = 'waiting' and (lease_until is null or lease_until < now())
        order by received_at limit ? for update skip locked
-     ) returning id, type, object_id, tries`,
+     ) returning id, type, object_id, tries, payload #>> '{data,object,payment_intent}' as payment_id`,
     [limit],
   );
-  return rows.map((row) => ({ id: row.id, type: row.type, objectId: row.object_id, tries: row.tries }));
+  return rows.map((row) => ({
+    id: row.id,
+    type: row.type,
+    objectId: row.object_id,
+    paymentId: row.payment_id,
+    tries: row.tries,
+  }));
 }
 
 export async function closeEvent(

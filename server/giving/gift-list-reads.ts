@@ -133,11 +133,11 @@ function groupByDay(rows: readonly GiftRow[]): GiftRow[][] {
 const optionSchema = z.object({ slug: z.string(), name: z.string() });
 
 export async function getGiftList(db: Db, filter: GiftFilter, reader: Reader): Promise<GiftList> {
-  const [found, byDay, parts, any, history] = await Promise.all([
+  const [found, byDay, parts, some, history] = await Promise.all([
     listGiftRows(db, filter, reader, PAGE_ROWS + 1),
     sumGiftsByDay(db, filter),
     queryRows(db, optionSchema, 'select slug, name from parts order by building_order'),
-    queryRows(db, z.object({ any: z.boolean() }), 'select exists (select 1 from gifts) as any'),
+    queryRows(db, z.object({ has_gift: z.boolean() }), 'select exists (select 1 from gifts) as has_gift'),
     listGiftHistory(db, new Date(0), HISTORY_LINES),
   ]);
   const rows = found.slice(0, PAGE_ROWS);
@@ -157,7 +157,7 @@ export async function getGiftList(db: Db, filter: GiftFilter, reader: Reader): P
       };
     }),
     total,
-    hasAnyGift: any[0]?.any ?? false,
+    hasAnyGift: some[0]?.has_gift ?? false,
     nextAfter: next ? String(rows.at(-1)?.number ?? '') : null,
     parts,
     history,

@@ -114,6 +114,13 @@ export async function lockGiftByPayment(
   return { id: gift.id, isFeePosted: gift.fee_posted_at !== null };
 }
 
+export async function isFeePosted(db: Db, paymentIntentId: string): Promise<boolean> {
+  const row: unknown = await db('gifts')
+    .where({ payment_intent_id: paymentIntentId })
+    .first('id', 'payment_intent_id', 'fee_posted_at');
+  return row !== undefined && feeRow.parse(row).fee_posted_at !== null;
+}
+
 const shareRow = z.object({
   part_id: z.string().nullable(),
   fund_id: z.string(),

@@ -15,7 +15,7 @@ import {
 } from '#shared/giving/give-schemas.ts';
 import { formatPence, NOTHING, subtract, type Pence } from '#shared/money.ts';
 import { sumInWords } from '#shared/sum-words.ts';
-import { getAppealWording } from '#server/campaign/index.ts';
+import { getAppealWording, getCampaign } from '#server/campaign/index.ts';
 import type { Deps } from '#server/deps.ts';
 import { Conflict, NotFound } from '#server/platform/errors.ts';
 import { getGivingSettings, getWording } from '#server/society/index.ts';
@@ -164,7 +164,7 @@ export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOut
   const found = await findIntent(deps.db, intentId);
   if (!found) throw new NotFound('We know of no gift at this address.');
   const intent = await bringUpToDate(deps, found);
-  const { standing } = await readRules(deps);
+  const campaign = await getCampaign(deps.db);
   const giftId = await findGiftIdOfIntent(deps.db, intent.id);
   const receipt = giftId ? await readReceipt(deps.db, giftId) : null;
   const gift = giftId
@@ -175,8 +175,8 @@ export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOut
     : undefined;
   return giveOutcomeSchema.parse({
     outcome: receipt ? 'paid' : OUTCOME_OF[intent.state],
-    campaignName: standing.campaign.name,
-    pronoun: standing.campaign.pronoun,
+    campaignName: campaign.name,
+    pronoun: campaign.pronoun,
     sumPence: intent.amountPence,
     giftAidPence: receipt?.declaration?.giftAidPence ?? NOTHING,
     shares: receipt?.shares ?? [],

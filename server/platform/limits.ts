@@ -2,6 +2,7 @@
 import type { RequestHandler } from 'express';
 import { RateLimiterMemory, RateLimiterPostgres, RateLimiterRes } from 'rate-limiter-flexible';
 import type { Deps } from '#server/deps.ts';
+import type { Trx } from './db.ts';
 import { TooMany } from './errors.ts';
 
 type Limit = { name: string; points: number; perSeconds: number };
@@ -19,6 +20,11 @@ export function createLimiter(deps: Pick<Deps, 'db'>, limit: Limit): RateLimiter
     // With the database away the page has other troubles; the count goes on in memory.
     insuranceLimiter: new RateLimiterMemory({ points: limit.points, duration: limit.perSeconds }),
   });
+}
+
+/** Counts that ran out an hour ago are of no more use; the library keeps them by the real clock. */
+export async function dropOldTries(trx: Trx): Promise<void> {
+  await trx.raw(`delete from rate_limit where expire < (extract(epoch from now()) - 3600) * 1000`);
 }
 
 /** Limits by the address that the trusted proxy names; a market square behind one address still fits. */

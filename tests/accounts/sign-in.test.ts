@@ -223,20 +223,21 @@ describe('guessing', () => {
 
   it('learns nothing from the time an unknown address takes', async () => {
     const person = await makePerson(app);
-    const medianMs = async (email: string, network: string): Promise<number> => {
-      const times: number[] = [];
-      for (let turn = 0; turn < 15; turn += 1) {
-        const visitor = openVisitor(app, { 'X-Forwarded-For': `${network}.${turn}` });
-        const began = performance.now();
-        await visitor.signIn({ email: turn < 8 ? email : `x${email}`, password: 'no' });
-        if (turn < 8) times.push(performance.now() - began);
-      }
-      return times.sort((one, two) => one - two)[4] ?? 0;
+    const timeOf = async (email: string, network: string): Promise<number> => {
+      const visitor = openVisitor(app, { 'X-Forwarded-For': network });
+      const began = performance.now();
+      await visitor.signIn({ email, password: 'no' });
+      return performance.now() - began;
     };
-    const known = await medianMs(person.email, '192.0.2');
-    const unknown = await medianMs('not-a-person@brackenhythe.example', '192.0.3');
-    // Without the dummy hash the unknown address would answer in a tenth of the time.
-    expect(unknown).toBeGreaterThan(known * 0.5);
-    expect(unknown).toBeLessThan(known * 2);
+    const [known, unknown]: [number[], number[]] = [[], []];
+    for (let turn = 0; turn < 9; turn += 1) {
+      known.push(await timeOf(person.email, `192.0.2.${turn}`));
+      unknown.push(await timeOf('not-a-person@brackenhythe.example', `198.18.0.${turn}`));
+    }
+    // The quickest of each, turn about: other work on the machine makes single answers slow, never quick.
+    const ratio = Math.min(...unknown) / Math.min(...known);
+    // Without the dummy hash the unknown address would answer in a fraction of the time.
+    expect(ratio).toBeGreaterThan(0.6);
+    expect(ratio).toBeLessThan(1.7);
   });
 });

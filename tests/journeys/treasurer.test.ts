@@ -41,7 +41,7 @@ test('from the door to the last line of the books', async () => {
   await page.waitForURL('**/desk/sign-in**');
   await expectAccessible(page);
   await expectAccessibleNarrow(page);
-  await page.getByLabel('E-mail', { exact: true }).fill(edwin.email);
+  await page.getByLabel('E-mail address', { exact: true }).fill(edwin.email);
   await page.getByLabel('Password', { exact: true }).fill('not the password');
   await page.getByRole('button', { name: 'Open the desk' }).click();
   await page.getByRole('alert').first().waitFor();
@@ -87,7 +87,7 @@ test('the desk with nothing in it says what goes there', async () => {
   const nell = personWith('secretary');
   const { page } = await stage.visitor(WIDE);
   await page.goto('/desk/sign-in', { waitUntil: 'networkidle' });
-  await page.getByLabel('E-mail', { exact: true }).fill(nell.email);
+  await page.getByLabel('E-mail address', { exact: true }).fill(nell.email);
   await page.getByLabel('Password', { exact: true }).fill(nell.password);
   await page.getByRole('button', { name: 'Open the desk' }).click();
   await page.waitForURL('**/desk');
