@@ -23,6 +23,7 @@ import {
   settleMailSchema,
 } from '#shared/giving/desk-schemas.ts';
 import {
+  checkoutRequestSchema,
   checkoutSchema,
   giveCheckSchema,
   giveFormSchema,
@@ -79,7 +80,7 @@ const PUBLIC: readonly Described[] = [
     path: '/api/gifts/checkout',
     operationId: 'beginCheckout',
     tag: 'giving',
-    body: nothing,
+    body: checkoutRequestSchema,
     answer: checkoutSchema,
   },
   {

@@ -53,7 +53,7 @@ export async function startWorker(deps: Deps): Promise<{ stop(): Promise<void> }
     parsedCronItems: cronItems,
     taskList: taskList(deps),
     logger: new Logger(() => (level, message) => {
-      if (level === 'error') deps.log.error({ from: 'queue' }, message);
+      if (String(level) === 'error') deps.log.error({ from: 'queue' }, message);
     }),
   });
   return {

@@ -21,7 +21,7 @@ export const add = (...sums: readonly Pence[]): Pence => pence(sums.reduce((tota
 export const subtract = (from: Pence, what: Pence): Pence => pence(from - what);
 export const least = (...sums: readonly Pence[]): Pence => pence(Math.min(...sums));
 export const most = (...sums: readonly Pence[]): Pence => pence(Math.max(...sums));
-export const negate = (sum: Pence): Pence => pence(sum === 0 ? 0 : -sum);
+export const negate = (sum: Pence): Pence => pence(0 - sum);
 
 /**
  * Splits a sum by weights so that the shares add up to the whole: every share is rounded down and the

@@ -50,8 +50,8 @@ export async function getFund(db: Db, slug: string): Promise<Fund> {
 }
 
 export async function addFund(trx: Trx, fund: Omit<Fund, 'id'>): Promise<Fund> {
-  const [row] = await trx('funds').insert(fund).returning<unknown[]>('*');
-  return fundSchema.parse(row);
+  const rows: unknown[] = await trx('funds').insert(fund).returning('*');
+  return fundSchema.parse(rows[0]);
 }
 
 const entryLineSchema = z.object({

@@ -36,10 +36,17 @@ export function settleAnswers(answers: GiveFormFilled): GiveFormFilled {
   };
 }
 
-/** The intent for the draft as it stands: the open one when nothing changed, so that a second press is harmless. */
-type Started = { intent: GiftIntent; campaignName: string };
+const isStillGood = (open: GiftIntent, now: Date): boolean =>
+  open.sessionExpiresAt === null
+    ? now.getTime() - open.createdAt.getTime() < KEY_HOLDS_MS
+    : open.sessionExpiresAt > now;
 
-async function startIntent(deps: Deps, trx: Trx, token: string | undefined): Promise<Started> {
+type Started = { intent: GiftIntent; campaignName: string };
+/** Whose draft, and which version of the appeal stood on the page that was pressed. */
+export type Press = { token: string | undefined; appealVersion: number };
+
+/** The intent for the draft as it stands: the open one when nothing changed, so that a second press is harmless. */
+async function startIntent(deps: Deps, trx: Trx, { token, appealVersion }: Press): Promise<Started> {
   const draft = await lockDraft(trx, token);
   if (!draft) throw new Conflict('There is nothing to pay yet. Fill in the sheet first.', 'no-draft');
   const rules = await readRules(deps);
@@ -52,16 +59,17 @@ async function startIntent(deps: Deps, trx: Trx, token: string | undefined): Pro
   const answers = settleAnswers(verdict.answers);
   const campaignName = rules.standing.campaign.name;
   const now = deps.clock.now();
+  const appeal = await getAppealWording(trx, rules.standing.campaign.id, now);
+  if (appeal.version !== appealVersion)
+    throw new Conflict(
+      'The words of the appeal have changed since you saw them. Please look once more.',
+      'wording-changed',
+    );
   const open = await findOpenIntentOf(trx, draft.id);
-  const isStillGood =
-    open &&
-    (open.sessionExpiresAt === null
-      ? now.getTime() - open.createdAt.getTime() < KEY_HOLDS_MS
-      : open.sessionExpiresAt > now);
-  if (open && isStillGood && sameAnswers(open.answers, answers)) return { intent: open, campaignName };
+  if (open && isStillGood(open, now) && sameAnswers(open.answers, answers))
+    return { intent: open, campaignName };
   const sum = chosenSum(answers, { leastPence: rules.leastPence });
   if ('fault' in sum) throw new Conflict(sum.fault, 'incomplete');
-  const appeal = await getAppealWording(trx, rules.standing.campaign.id, now);
   const intent = await addIntent(trx, {
     draftId: draft.id,
     amountPence: sum.pence,
@@ -138,13 +146,10 @@ export async function askForSession(deps: Deps, intent: GiftIntent, campaignName
 
 /**
  * @returns the address of the card page.
- * @throws Conflict `no-draft` or `incomplete`, Refused `part-full`, Upstream when the card service is away.
+ * @throws Conflict `no-draft`, `incomplete` or `wording-changed`, Refused `part-full`, Upstream when the card service is away.
  */
-export async function beginCheckout(
-  deps: Deps,
-  token: string | undefined,
-): Promise<{ url: string; intentId: string }> {
-  const { intent, campaignName } = await deps.db.transaction((trx) => startIntent(deps, trx, token));
+export async function beginCheckout(deps: Deps, press: Press): Promise<{ url: string; intentId: string }> {
+  const { intent, campaignName } = await deps.db.transaction((trx) => startIntent(deps, trx, press));
   if (intent.sessionUrl) return { url: intent.sessionUrl, intentId: intent.id };
   return { url: await askForSession(deps, intent, campaignName), intentId: intent.id };
 }

@@ -1,7 +1,7 @@
 // The giver's own endpoints: sheet, draft, check, checkout, outcome and receipt. Nothing here is ever cached.
 import { Router, type CookieOptions, type Request, type Response } from 'express';
 import { z } from 'zod';
-import { checkoutSchema } from '#shared/giving/give-schemas.ts';
+import { checkoutRequestSchema, checkoutSchema } from '#shared/giving/give-schemas.ts';
 import type { Deps } from '#server/deps.ts';
 import { NotFound } from '#server/platform/errors.ts';
 import { limitTries } from '#server/platform/limits.ts';
@@ -22,7 +22,6 @@ const sheetQuery = z.strictObject({
   other: z.string().max(30).optional(),
 });
 const draftQuery = z.strictObject({ quiet: z.literal('1').optional() });
-const nothing = z.strictObject({});
 
 const draftCookie = (deps: Deps) => (deps.config.cookie.isSecure ? '__Host-treenail-gift' : 'treenail-gift');
 
@@ -67,8 +66,10 @@ export function createGiftsRouter(deps: Deps): Router {
     '/checkout',
     limitTries(deps, { name: 'checkout', points: 30, perSeconds: 600 }),
     async (req, res) => {
-      parse(nothing, req.body ?? {});
-      res.json(checkoutSchema.parse(await beginCheckout(deps, readDraftToken(deps, req))));
+      const { appealVersion } = parse(checkoutRequestSchema, req.body ?? {});
+      res.json(
+        checkoutSchema.parse(await beginCheckout(deps, { token: readDraftToken(deps, req), appealVersion })),
+      );
     },
   );
   router.get('/:intentId/outcome', async (req, res) => {

@@ -84,7 +84,7 @@ type NewIntent = Pick<
 > & { draftId: string | null };
 
 export async function addIntent(trx: Trx, intent: NewIntent): Promise<GiftIntent> {
-  const [row] = await trx('gift_intents')
+  const rows: unknown[] = await trx('gift_intents')
     .insert({
       draft_id: intent.draftId,
       amount_pence: intent.amountPence,
@@ -95,8 +95,8 @@ export async function addIntent(trx: Trx, intent: NewIntent): Promise<GiftIntent
       answers: JSON.stringify(intent.answers),
       created_at: intent.createdAt,
     })
-    .returning<unknown[]>('*');
-  return toIntent(row);
+    .returning('*');
+  return toIntent(rows[0]);
 }
 
 export async function saveSession(

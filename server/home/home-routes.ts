@@ -5,7 +5,9 @@ import { createDrawnOnce, keepAnswer, sendKept } from '#server/platform/pages/in
 import { readCampaign } from './campaign-reads.ts';
 
 export function createCampaignRouter(deps: Deps): Router {
-  const drawn = createDrawnOnce(deps.changes, async () => keepAnswer(JSON.stringify(await readCampaign(deps)), 'json'));
+  const drawn = createDrawnOnce(deps.changes, async () =>
+    keepAnswer(JSON.stringify(await readCampaign(deps)), 'json'),
+  );
   const router = Router();
   router.get('/', async (req, res) => {
     sendKept(req, res, await drawn.get('campaign'));

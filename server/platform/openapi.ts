@@ -1,5 +1,10 @@
 // The API described from the schemas it runs on, as OpenAPI 3.1.
-import { extendZodWithOpenApi, OpenAPIRegistry, OpenApiGeneratorV31, type RouteConfig } from '@asteasolutions/zod-to-openapi';
+import {
+  extendZodWithOpenApi,
+  OpenAPIRegistry,
+  OpenApiGeneratorV31,
+  type RouteConfig,
+} from '@asteasolutions/zod-to-openapi';
 import { Router } from 'express';
 import { z } from 'zod';
 
@@ -20,13 +25,17 @@ export type Described = Pick<RouteConfig, 'method' | 'path' | 'summary'> & {
 const JSON_TYPE = 'application/json';
 
 /** Builds the document from what each room says of its own endpoints. */
-export function describeApi(endpoints: readonly Described[], problem: z.ZodType): ReturnType<OpenApiGeneratorV31['generateDocument']> {
+export function describeApi(
+  endpoints: readonly Described[],
+  problem: z.ZodType,
+): ReturnType<OpenApiGeneratorV31['generateDocument']> {
   const registry = new OpenAPIRegistry();
   registry.registerComponent('securitySchemes', 'desk', {
     type: 'apiKey',
     in: 'cookie',
     name: 'treenail',
-    description: 'The desk’s session, together with the header X-Treenail-Token on whatever changes something.',
+    description:
+      'The desk’s session, together with the header X-Treenail-Token on whatever changes something.',
   });
   const problems = { 'application/problem+json': { schema: problem } };
   for (const one of endpoints) {
@@ -53,7 +62,11 @@ export function describeApi(endpoints: readonly Described[], problem: z.ZodType)
   }
   return new OpenApiGeneratorV31(registry.definitions).generateDocument({
     openapi: '3.1.0',
-    info: { title: 'Treenail', version: '1', description: 'Every peg holds. Sums are whole pence, days are days in London.' },
+    info: {
+      title: 'Treenail',
+      version: '1',
+      description: 'Every peg holds. Sums are whole pence, days are days in London.',
+    },
   });
 }
 

@@ -233,6 +233,8 @@ export const giveCheckSchema = z.object({
 });
 export type GiveCheck = z.infer<typeof giveCheckSchema>;
 
+/** Paying agrees to the appeal as the check page told it; another version by now is shown first. */
+export const checkoutRequestSchema = z.strictObject({ appealVersion: z.int().positive() });
 export const checkoutSchema = z.object({ url: z.url() });
 
 export const GIFT_OUTCOMES = ['paid', 'confirming', 'not-paid'] as const;

@@ -103,6 +103,7 @@ export function CheckPage() {
           if (isWorking) event.preventDefault();
         }}
       >
+        <input type="hidden" name="appealVersion" value={check.appealVersion} />
         <CheckAnswers check={check} />
         <TotalBox check={check} />
         <div className="end">

@@ -73,9 +73,10 @@ export function backToSheet(error: unknown): string | undefined {
   return reason === 'no-draft' || status === 404 ? START_AGAIN : undefined;
 }
 
-const payTroublePath = (status: number) =>
-  `/give/check?trouble=${status === 429 ? 'many' : status === 502 ? 'away' : 'fault'}`;
+const PAY_TROUBLE_NAMES: Record<number, string> = { 409: 'words', 429: 'many', 502: 'away' };
+const payTroublePath = (status: number) => `/give/check?trouble=${PAY_TROUBLE_NAMES[status] ?? 'fault'}`;
 const PAY_TROUBLES: Record<string, PressTrouble> = {
+  words: { heading: 'The words of the appeal have changed since you saw them. Please look once more.' },
   many: { heading: 'Too many tries came from here. Nothing was taken. Wait a little and try again.' },
   away: { heading: 'The card service did not answer. Nothing was taken. Try again in a minute.' },
   fault: OUR_FAULT,
@@ -84,9 +85,10 @@ const PAY_TROUBLES: Record<string, PressTrouble> = {
 export const payTroubleOf = (search: URLSearchParams): PressTrouble | undefined =>
   PAY_TROUBLES[search.get('trouble') ?? ''];
 
-export async function pressPay({ api }: RouteContext) {
+export async function pressPay({ api }: RouteContext, request: Request) {
+  const form = await request.formData();
   try {
-    const { url } = await startCheckout(api);
+    const { url } = await startCheckout(api, Number(form.get('appealVersion')));
     return redirectDocument(url, SEE_OTHER);
   } catch (error) {
     const sheet = backToSheet(error);

@@ -53,8 +53,8 @@ export async function saveDraft(api: Api, answers: GiveAnswers): Promise<void> {
   await api.send(z.object({}), DRAFT_PATH, { method: 'PUT', body: answers });
 }
 
-export const startCheckout = (api: Api) =>
-  api.send(checkoutSchema, '/api/gifts/checkout', { method: 'POST', body: {} });
+export const startCheckout = (api: Api, appealVersion: number) =>
+  api.send(checkoutSchema, '/api/gifts/checkout', { method: 'POST', body: { appealVersion } });
 
 /** Keeps what was typed while the page is being left; nobody waits for the answer, right or wrong. */
 export function keepDraftQuietly(answers: GiveAnswers): void {

@@ -21,7 +21,7 @@ export function giveRoutes(context: RouteContext): RouteObject[] {
       id: 'give-check',
       path: '/give/check',
       loader: ({ request }) => loadCheck(context, request),
-      action: () => pressPay(context),
+      action: ({ request }) => pressPay(context, request),
       Component: CheckPage,
     },
     {

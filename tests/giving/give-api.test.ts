@@ -2,7 +2,13 @@
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { SETTING_KEYS, setSetting } from '#server/society/index.ts';
 import { startTestApp, type TestApp } from '#tests/support/app.ts';
-import { filledSheet, giveGift, setUpTown, withDeclaration } from '#tests/support/factories.ts';
+import {
+  APPEAL_VERSION,
+  filledSheet,
+  giveGift,
+  setUpTown,
+  withDeclaration,
+} from '#tests/support/factories.ts';
 
 let app: TestApp;
 beforeAll(async () => {
@@ -113,20 +119,27 @@ describe('checkout', () => {
     const agent = app.agent();
     await agent.put('/api/gifts/draft').send(filledSheet()).expect(200);
     const [one, two] = await Promise.all([
-      agent.post('/api/gifts/checkout').send({}),
-      agent.post('/api/gifts/checkout').send({}),
+      agent.post('/api/gifts/checkout').send({ appealVersion: APPEAL_VERSION }),
+      agent.post('/api/gifts/checkout').send({ appealVersion: APPEAL_VERSION }),
     ]);
     expect(one?.body.url).toBe(two?.body.url);
     await agent
       .put('/api/gifts/draft')
       .send(filledSheet({ amount: '60' }))
       .expect(200);
-    const three = await agent.post('/api/gifts/checkout').send({}).expect(200);
+    const three = await agent.post('/api/gifts/checkout').send({ appealVersion: APPEAL_VERSION }).expect(200);
     expect(three.body.url).not.toBe(one?.body.url);
   });
 
+  test('under another wording than the one that was shown is a conflict: look once more', async () => {
+    const agent = app.agent();
+    await agent.put('/api/gifts/draft').send(filledSheet()).expect(200);
+    const { body } = await agent.post('/api/gifts/checkout').send({ appealVersion: 1 }).expect(409);
+    expect(body.reason).toBe('wording-changed');
+  });
+
   test('without a draft is a conflict, with unknown fields invalid', async () => {
-    await app.agent().post('/api/gifts/checkout').send({}).expect(409);
+    await app.agent().post('/api/gifts/checkout').send({ appealVersion: APPEAL_VERSION }).expect(409);
     await app.agent().post('/api/gifts/checkout').send({ amountPence: 1 }).expect(400);
   });
 });

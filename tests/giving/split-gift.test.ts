@@ -2,7 +2,14 @@
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { readOutcome, readStanding } from '#server/giving/index.ts';
 import { startTestApp, type TestApp } from '#tests/support/app.ts';
-import { askToGive, control, filledSheet, giveGift, setUpTown } from '#tests/support/factories.ts';
+import {
+  askToGive,
+  control,
+  APPEAL_VERSION,
+  filledSheet,
+  giveGift,
+  setUpTown,
+} from '#tests/support/factories.ts';
 import { expectBooksToAgree } from '#tests/support/invariants.ts';
 
 let app: TestApp;
@@ -56,7 +63,7 @@ test('a part filled by free money between checking and paying is refused with it
     .send({ ...filledSheet({ towards: 'footing' }) })
     .expect(200);
   await giveGift(app, { ...sum(4_500), email: 'quick@post.example' });
-  const answer = await agent.post('/api/gifts/checkout').send({}).expect(422);
+  const answer = await agent.post('/api/gifts/checkout').send({ appealVersion: APPEAL_VERSION }).expect(422);
   expect(answer.body).toMatchObject({ code: 'refused', reason: 'part-full' });
   const sheet = await agent.get('/api/gifts/sheet').expect(200);
   expect(sheet.body).toMatchObject({ answers: { name: 'Thea Quillan' } });

@@ -19,8 +19,8 @@ beforeAll(async () => {
 });
 afterAll(() => stage.stop());
 
-const lettersTo = async (address: string) =>
-  (await stage.mail.messages()).filter((one) => JSON.stringify(one).includes(address));
+const lettersTo = (address: string) =>
+  stage.mail.messages().filter((one) => JSON.stringify(one).includes(address));
 
 async function fillSheet(page: Page, email: string): Promise<void> {
   await page.getByLabel('Full name').fill('Thea Quillan');

@@ -85,7 +85,7 @@ describe('problems', () => {
   test.each([
     ['get', '/api/nothing-here', undefined, 404],
     ['put', '/api/gifts/draft', { name: 7, colour: 'red' }, 400],
-    ['post', '/api/gifts/checkout', {}, 409],
+    ['post', '/api/gifts/checkout', { appealVersion: 1 }, 409],
     ['get', '/api/desk/gifts', undefined, 401],
   ] as const)('%s %s is told after the RFC', async (method, path, body, status) => {
     const request = app.agent()[method](path);

@@ -6,6 +6,9 @@ import { beginCheckout, makeToken, readOutcome, writeDraft } from '#server/givin
 import { seedBrackenhythe, type Brackenhythe } from '#seeds/brackenhythe.ts';
 import type { TestApp } from './app.ts';
 
+/** The version in force in the town that `setUpTown` makes. */
+export const APPEAL_VERSION = 2;
+
 const sessionInUrl = /(cs_[A-Za-z0-9_]+)/;
 
 /** The society, its people and the Lampwoman, with no gift yet. */
@@ -57,7 +60,7 @@ export type Asked = { intentId: string; sessionId: string; url: string };
 export async function askToGive(app: TestApp, changes: GiveForm = {}): Promise<Asked> {
   const token = makeToken();
   await writeDraft(app.deps, token, filledSheet(changes), false);
-  const { url, intentId } = await beginCheckout(app.deps, token);
+  const { url, intentId } = await beginCheckout(app.deps, { token, appealVersion: APPEAL_VERSION });
   return { intentId, sessionId: z.string().parse(sessionInUrl.exec(url)?.[1]), url };
 }
 
