@@ -31,7 +31,12 @@ export async function up(knex: Knex): Promise<void> {
       session_expires_at timestamptz,
       last_fault text,
       checked_at timestamptz,
-      created_at timestamptz not null
+      created_at timestamptz not null,
+      -- The treasurer looked at a payment that does not agree and says how it was put right.
+      settled_at timestamptz,
+      settled_by uuid references accounts,
+      settled_reason text,
+      constraint gift_intents_settled check ((settled_at is null) = (settled_by is null) and (settled_at is null) = (settled_reason is null))
     );
     create index gift_intents_open on gift_intents (created_at) where state in ('started','asked','confirming');
 
@@ -103,7 +108,11 @@ export async function up(knex: Knex): Promise<void> {
       tries integer not null default 0,
       lease_until timestamptz,
       worked_at timestamptz,
-      fault text
+      fault text,
+      settled_at timestamptz,
+      settled_by uuid references accounts,
+      settled_reason text,
+      constraint payment_events_settled check ((settled_at is null) = (settled_by is null) and (settled_at is null) = (settled_reason is null))
     );
     create index payment_events_waiting on payment_events (received_at) where state = 'waiting';
     create index payment_events_object on payment_events (object_id);

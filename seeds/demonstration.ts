@@ -143,7 +143,15 @@ async function towardsOf({ deps, chance }: Run, planned: PlannedGift): Promise<s
 
 function toForm(giver: Giver, words: Partial<GiveForm>, planned: PlannedGift, towards: string): GiveForm {
   const blank = Object.fromEntries(GIVE_FIELDS.map((field) => [field, '']));
-  const form = { ...blank, dedication: 'none', country: 'GB', ...giver, ...words, towards };
+  const form = {
+    ...blank,
+    dedication: 'none',
+    country: 'GB',
+    shownWordings: '1.1',
+    ...giver,
+    ...words,
+    towards,
+  };
   return { ...form, amount: 'other', other: (planned.amountPence / 100).toFixed(2) } as GiveForm;
 }
 
@@ -200,12 +208,13 @@ export async function seedDemonstration(deps: SeedDeps, input: SeedInput): Promi
   } finally {
     hearing.closeAllConnections();
     await new Promise((resolve) => hearing.close(resolve));
-    await controls.post(
-      '/clock',
-      isToday(input.lastDay) ? { reset: true } : { to: `${input.lastDay}T20:00:00Z` },
-    );
+    await putClockRight(controls, input.lastDay);
   }
 }
+
+/** Puts the stand-in's clock where the demonstration stands, also after a generator that was cut off. */
+export const putClockRight = (controls: Controls, lastDay: Day): Promise<void> =>
+  controls.post('/clock', isToday(lastDay) ? { reset: true } : { to: `${lastDay}T20:00:00Z` });
 
 const isToday = (day: Day): boolean => day === dayOf(new Date());
 /** Where the clock stands when all is given: now, or the evening of a day that was asked for. */

@@ -20,7 +20,9 @@ import {
   giftFilterSchema,
   giftListSchema,
   judgeWordsSchema,
+  PAYMENT_KINDS,
   settleMailSchema,
+  settlePaymentSchema,
 } from '#shared/giving/desk-schemas.ts';
 import {
   checkoutRequestSchema,
@@ -212,6 +214,16 @@ const DESK: readonly Described[] = [
     params: z.object({ id: z.uuid() }),
     body: settleMailSchema,
     answer: doneSchema,
+  },
+  {
+    method: 'post',
+    path: '/api/desk/payments/{kind}/{id}/settle',
+    operationId: 'settlePayment',
+    tag: 'giving',
+    params: z.object({ kind: z.enum(PAYMENT_KINDS), id: z.string() }),
+    body: settlePaymentSchema,
+    answer: doneSchema,
+    summary: 'The treasurer says how a payment that does not agree, or a refused event, was put right.',
   },
 ];
 

@@ -20,6 +20,7 @@ import { securityHeaders } from '#server/platform/headers.ts';
 import { healthHandler } from '#server/platform/health.ts';
 import { requireJson } from '#server/platform/json-only.ts';
 import { requireOwnOrigin } from '#server/platform/own-origin.ts';
+import { httpSerializers } from '#server/platform/log.ts';
 import { mountPages } from '#server/platform/pages/index.ts';
 import { nothingHere, problemHandler } from '#server/platform/problems.ts';
 import { createSocietyRouter } from '#server/society/index.ts';
@@ -33,7 +34,14 @@ export async function createApp(deps: Deps, httpServer?: Server): Promise<Expres
   app.disable('x-powered-by');
   app.set('trust proxy', deps.config.proxyHops);
   app.use(securityHeaders(deps.config));
-  app.use(pinoHttp({ logger: deps.log, genReqId: nameRequest, autoLogging: { ignore: isQuiet } }));
+  app.use(
+    pinoHttp({
+      logger: deps.log,
+      genReqId: nameRequest,
+      autoLogging: { ignore: isQuiet },
+      serializers: httpSerializers,
+    }),
+  );
 
   app.get('/healthz', healthHandler(deps.db));
   app.use('/webhooks/payments', createWebhookRouter(deps));

@@ -3,7 +3,7 @@ import { createServer } from 'node:http';
 import { refuseDemonstrationAccounts } from '#server/accounts/index.ts';
 import { createApp } from '#server/app.ts';
 import { openDeps } from '#server/open-deps.ts';
-import { ConfigFaults } from '#server/platform/config.ts';
+import { ConfigFaults, isLoopback } from '#server/platform/config.ts';
 
 const HEADERS_TIMEOUT_MS = 15_000;
 const REQUEST_TIMEOUT_MS = 60_000;
@@ -19,7 +19,7 @@ async function serve(): Promise<void> {
     app,
   );
   // A demonstration with known passwords is not for the network, unless it was given a name there.
-  const isLocal = /^(localhost|127\.)/.test(new URL(config.publicAddress).hostname);
+  const isLocal = isLoopback(config.publicAddress);
   server.listen({ port: config.port, ...(isLocal && { host: '127.0.0.1' }) }, () =>
     log.info({ port: config.port }, 'listening'),
   );

@@ -14,6 +14,8 @@ async function work(): Promise<void> {
   };
   process.once('SIGTERM', () => void stop());
   process.once('SIGINT', () => void stop());
+  // Whoever started us starts us again; a worker that does not work must not look alive.
+  await worker.failed;
 }
 
 try {

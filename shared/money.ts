@@ -67,3 +67,6 @@ export function formatPence(sum: Pence): string {
 
 /** 1,234.50 for a ruled column whose head names the currency. */
 export const formatLedger = (sum: Pence): string => ledger.format(sum / 100);
+
+/** 1234.50: a plain number, so that a spreadsheet can add it up. */
+export const formatPlain = (sum: Pence): string => (sum / 100).toFixed(2);

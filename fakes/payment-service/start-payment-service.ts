@@ -1,4 +1,4 @@
-// Starts the stand-in inside a process: opens its state, listens on two loopback ports, and stops cleanly.
+// Starts the stand-in inside a process: opens its state, listens on two ports, and stops cleanly.
 import { createServer } from 'node:http';
 import type { RequestListener, Server } from 'node:http';
 import { createApp } from './api/app.ts';
@@ -14,12 +14,19 @@ export type RunningPaymentService = { apiUrl: string; controlUrl: string; stop()
 
 // Never the outside world: the controls have no lock.
 const LOOPBACK = '127.0.0.1';
+const EVERYWHERE = '::';
 
-function listen(app: RequestListener, port: number): Promise<Server> {
+/** A card page with a name on the network has to be reached from there, by a phone in the same room. */
+function hostOfPages(publicUrl: string | undefined): string {
+  const isLocal = !publicUrl || /^(localhost|127(\.\d+){3}|\[::1\])$/.test(new URL(publicUrl).hostname);
+  return isLocal ? LOOPBACK : EVERYWHERE;
+}
+
+function listen(app: RequestListener, port: number, host: string): Promise<Server> {
   const server = createServer(app);
   return new Promise((resolve, reject) => {
     server.once('error', reject);
-    server.listen(port, LOOPBACK, () => resolve(server));
+    server.listen(port, host, () => resolve(server));
   });
 }
 
@@ -47,9 +54,9 @@ export async function startPaymentService(options: ServiceOptions): Promise<Runn
     pageUrl: () => options.publicUrl ?? pageUrl,
   };
   forgetOldAnswers(service);
-  const api = await listen(createApp(service), options.port ?? 0);
+  const api = await listen(createApp(service), options.port ?? 0, hostOfPages(options.publicUrl));
   pageUrl = urlOf(api);
-  const controls = await listen(createControls(service), options.controlPort ?? 0).catch(
+  const controls = await listen(createControls(service), options.controlPort ?? 0, LOOPBACK).catch(
     async (error: unknown) => {
       await close(api);
       throw error;

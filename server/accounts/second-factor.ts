@@ -94,8 +94,11 @@ export async function confirmSecondFactor(
     throw new Conflict('Begin again: there is no picture to confirm.', 'nothing-offered');
   await proofs.take(account.id);
   const step = await findTimeStep(unseal(deps.config.sessionSecret, pendingSecret), code);
-  if (step === undefined) throw wrongCode();
   const meta = deedMeta(deps, res);
+  if (step === undefined) {
+    await deps.db.transaction((trx) => recordAccountDeed(trx, 'second-factor-failed', account.id, meta));
+    throw wrongCode();
+  }
   const codes = await deps.db.transaction(async (trx) => {
     if (desk.step !== 'signed-in') await recordAccountDeed(trx, 'signed-in', account.id, meta);
     return keepSecondFactor(trx, { accountId: account.id, sealedSecret: pendingSecret, step }, meta);

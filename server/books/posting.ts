@@ -21,7 +21,8 @@ function byFund(shares: readonly FundShare[]): FundShare[] {
   return [...sums].map(([fundId, amountPence]) => ({ fundId, amountPence }));
 }
 
-type Posting = { giftId: string; at: Date };
+/** `at` is when the money moved, which names the day; `recordedAt` is when we wrote it down. */
+type Posting = { giftId: string; at: Date; recordedAt: Date };
 
 /**
  * Money received by card: debit what the card service holds for us, credit gifts.
@@ -29,14 +30,14 @@ type Posting = { giftId: string; at: Date };
  */
 export const postGiftReceived = (
   trx: Trx,
-  { giftId, at }: Posting,
+  { giftId, at, recordedAt }: Posting,
   shares: readonly FundShare[],
 ): Promise<boolean> =>
   insertEntry(
     trx,
     { source: 'gift', sourceId: giftId, kind: 'received' },
     dayOf(at),
-    at,
+    recordedAt,
     moved('card:pending', 'income:gifts:card', byFund(shares)),
   );
 
@@ -47,7 +48,7 @@ export const postGiftReceived = (
  */
 export async function postCardFee(
   trx: Trx,
-  { giftId, at }: Posting,
+  { giftId, at, recordedAt }: Posting,
   fee: { feePence: Pence; shares: readonly FundShare[]; bornByFundId: string | null },
 ): Promise<boolean> {
   if (fee.feePence === NOTHING) return false;
@@ -59,13 +60,13 @@ export async function postCardFee(
   const own = funds.map((one, index) => ({ fundId: one.fundId, amountPence: feeParts[index] ?? NOTHING }));
   const key = { source: 'gift', sourceId: giftId, kind: 'card-fee' };
   if (fee.bornByFundId === null)
-    return insertEntry(trx, key, dayOf(at), at, moved('expense:card-fees', 'card:pending', own));
+    return insertEntry(trx, key, dayOf(at), recordedAt, moved('expense:card-fees', 'card:pending', own));
   // The fee leaves the bearing fund's share of the money at the card service, whichever gift it was for.
   return insertEntry(
     trx,
     key,
     dayOf(at),
-    at,
+    recordedAt,
     moved('expense:card-fees', 'card:pending', [{ fundId: fee.bornByFundId, amountPence: fee.feePence }]),
   );
 }

@@ -25,6 +25,7 @@ export async function publishCampaign(trx: Trx, campaignId: string, deed: Deed):
       'goal-is-not-sum',
     );
   }
+  await refusePartsWithoutFund(trx, campaignId);
   await trx('campaigns').where({ id: campaignId }).update({ published_at: deed.at });
   await recordAudit(trx, {
     ...deed,
@@ -32,6 +33,22 @@ export async function publishCampaign(trx: Trx, campaignId: string, deed: Deed):
     objectKind: 'campaign',
     objectId: campaignId,
   });
+}
+
+/** Where choosing a part makes a fund of its own, each part that can be chosen must have one. */
+async function refusePartsWithoutFund(trx: Trx, campaignId: string): Promise<void> {
+  const needsFunds = await trx('appeal_wordings')
+    .where({ campaign_id: campaignId, part_choice: 'fund' })
+    .first('id');
+  if (needsFunds === undefined) return;
+  const bare = (await listParts(trx, campaignId)).filter(
+    (part) => part.topMm !== null && part.fundId === null,
+  );
+  if (bare.length > 0)
+    throw new Refused(
+      `The wording makes each part a fund of its own, but these have none: ${bare.map((part) => part.name).join(', ')}.`,
+      'part-without-fund',
+    );
 }
 
 const partStateSchema = z.object({ id: z.string(), work_state: z.enum(['waiting', 'making', 'placed']) });

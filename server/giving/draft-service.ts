@@ -4,7 +4,7 @@ import { isFull } from '#shared/campaign/reach-rules.ts';
 import { fieldFaults, type FieldFaults } from '#shared/errors.ts';
 import type { Deps } from '#server/deps.ts';
 import { Invalid } from '#server/platform/errors.ts';
-import { getGivingSettings, isGiftAidOffered } from '#server/society/index.ts';
+import { getGivingSettings, getWording, isGiftAidOffered, type Wording } from '#server/society/index.ts';
 import { keepDraft } from './draft-store.ts';
 import { readStanding, type Standing } from './standing.ts';
 
@@ -12,17 +12,29 @@ type Rules = {
   standing: Standing;
   leastPence: Parameters<typeof giveRequestSchema>[0]['leastPence'];
   isGiftAidOffered: boolean;
+  declaration: Wording;
+  consent: Wording;
 };
+
+/** How a sheet says which words stood on it. */
+export const shownWordings = ({ declaration, consent }: Pick<Rules, 'declaration' | 'consent'>): string =>
+  `${declaration.version}.${consent.version}`;
 
 export async function readRules(deps: Deps): Promise<Rules> {
   const now = deps.clock.now();
-  const [standing, settings, offered] = await Promise.all([
+  const [standing, settings, offered, declaration, consent] = await Promise.all([
     readStanding(deps.db),
     getGivingSettings(deps.db, now),
     isGiftAidOffered(deps.db, now),
+    getWording(deps.db, 'declaration', now),
+    getWording(deps.db, 'consent', now),
   ]);
-  return { standing, leastPence: settings.leastGiftPence, isGiftAidOffered: offered };
+  return { standing, leastPence: settings.leastGiftPence, isGiftAidOffered: offered, declaration, consent };
 }
+
+/** Whether anything was agreed to whose words matter afterwards. */
+const relies = ({ declare, byEmail, byPost, byPhone }: GiveFormFilled): boolean =>
+  [declare, byEmail, byPost, byPhone].includes('on');
 
 /** Every fault of the answers, or the answers checked; pure but for the rules it is given. */
 export function judgeAnswers(
@@ -41,6 +53,9 @@ export function judgeAnswers(
   }
   if (declare === 'on' && !rules.isGiftAidOffered)
     faults.declare = 'We cannot claim Gift Aid yet. Leave the box unticked.';
+  if (relies(parsed.data) && parsed.data.shownWordings !== shownWordings(rules))
+    faults.declare ??=
+      'The words you agree to have changed since this page was opened. Load the page again and read them; your answers are kept.';
   return Object.keys(faults).length > 0 ? { faults } : { answers: parsed.data };
 }
 

@@ -38,6 +38,11 @@ export async function lockDraft(trx: Trx, token: string | undefined): Promise<Dr
   return row === undefined ? undefined : toDraft(row);
 }
 
+export async function lockDraftById(trx: Trx, id: string): Promise<Draft | undefined> {
+  const row: unknown = await trx('give_drafts').where({ id }).forUpdate().first();
+  return row === undefined ? undefined : toDraft(row);
+}
+
 export async function keepDraft(
   trx: Trx,
   token: string,

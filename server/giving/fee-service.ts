@@ -24,7 +24,7 @@ export async function postFeeOfPayment(deps: Deps, payment: Stripe.PaymentIntent
     const bornByFundId = settings.cardFeeFundSlug ? (await getFund(trx, settings.cardFeeFundSlug)).id : null;
     await postCardFee(
       trx,
-      { giftId: gift.id, at: new Date(balance.created * 1000) },
+      { giftId: gift.id, at: new Date(balance.created * 1000), recordedAt: at },
       { feePence, shares: await listShares(trx, gift.id), bornByFundId },
     );
     await saveFee(trx, gift.id, { feePence, balanceTransactionId: balance.id, chargeId: charge.id, at });

@@ -3,15 +3,12 @@ import { stringify } from 'csv-stringify';
 import { formatTime } from '#shared/dates.ts';
 import type { GiftFilter, GiftRow } from '#shared/giving/desk-schemas.ts';
 import { DEDICATION_WORDS, THANKS_WORDS } from '#shared/giving/desk-words.ts';
-import type { Pence } from '#shared/money.ts';
+import { formatPlain } from '#shared/money.ts';
 import type { Db } from '#server/platform/db.ts';
 import { listGiftRows } from './gift-list-reads.ts';
 import type { Reader } from './withheld-names.ts';
 
 const ROWS_AT_ONCE = 500;
-
-/** 1234.50: a plain number, so that a spreadsheet can add it up. */
-const plainPounds = (sum: Pence): string => (sum / 100).toFixed(2);
 
 const COLUMNS = [
   { key: 'number', header: 'No.' },
@@ -35,8 +32,8 @@ const toCells = (row: GiftRow): Record<string, string> => ({
   how: row.how,
   towards: row.towards,
   dedication: row.dedication === null ? '' : DEDICATION_WORDS[row.dedication],
-  sum: plainPounds(row.sumPence),
-  giftAid: plainPounds(row.giftAidPence),
+  sum: formatPlain(row.sumPence),
+  giftAid: formatPlain(row.giftAidPence),
   thanks: THANKS_WORDS[row.thanks],
   unreadWords: String(row.unreadWords),
 });

@@ -23,6 +23,7 @@ const DEEDS: Record<string, string> = {
   'words-held': 'Words held back',
   'mail-sent-again': 'Letter sent again',
   'mail-left': 'Letter left as it is',
+  'payment-looked-at': 'Payment looked at and settled',
   'gifts-exported': 'List of gifts taken out as CSV',
 };
 
@@ -65,7 +66,16 @@ export async function listHistoryOf(db: Db, objectIds: readonly string[]): Promi
   return lines.map(toHistoryLine);
 }
 
-const GIFT_KINDS = ['gift', 'gift-intent', 'intent', 'words', 'public-words', 'mail', 'gift-list'];
+const GIFT_KINDS = [
+  'gift',
+  'gift-intent',
+  'intent',
+  'payment-event',
+  'words',
+  'public-words',
+  'mail',
+  'gift-list',
+];
 
 /** Newest first: what was done to any gift since a moment. */
 export async function listGiftHistory(db: Db, since: Date, limit: number): Promise<HistoryLine[]> {

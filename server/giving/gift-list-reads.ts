@@ -9,7 +9,7 @@ import {
   type GiftRow,
   type GiftSums,
 } from '#shared/giving/desk-schemas.ts';
-import { add, NOTHING, pence } from '#shared/money.ts';
+import { add, applyRate, NOTHING } from '#shared/money.ts';
 import { queryRows, toCount, toPence, type Db } from '#server/platform/db.ts';
 import {
   afterClause,
@@ -111,8 +111,8 @@ export async function sumGiftsByDay(db: Db, filter: GiftFilter): Promise<Map<Day
     const each = heap.is_declared ? giftAidOn(heap.amount_pence, heap.received_on) : NOTHING;
     const sums = {
       count: heap.count,
-      sumPence: pence(heap.amount_pence * heap.count),
-      giftAidPence: pence(each * heap.count),
+      sumPence: applyRate(heap.amount_pence, { per: heap.count, of: 1 }),
+      giftAidPence: applyRate(each, { per: heap.count, of: 1 }),
     };
     days.set(heap.received_on, addSums(days.get(heap.received_on) ?? NO_SUMS, sums));
   }

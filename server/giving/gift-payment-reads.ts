@@ -2,6 +2,7 @@
 import { z } from 'zod';
 import { queryRows, type Db } from '#server/platform/db.ts';
 import type { GiftHead } from './gift-chain-reads.ts';
+import { withoutIds } from './payment-handles.ts';
 
 const eventSchema = z.object({
   id: z.string(),
@@ -11,7 +12,7 @@ const eventSchema = z.object({
   received_at: z.date(),
   state: z.enum(['waiting', 'worked', 'ignored', 'refused']),
   tries: z.int(),
-  fault: z.string().nullable(),
+  fault: z.string().nullable().transform(withoutIds),
   reason: z.string().nullable(),
 });
 export type PaymentEvent = z.output<typeof eventSchema>;

@@ -1,12 +1,7 @@
 // What a giver wrote with a gift and who read it, and the letters that went out for it.
 import { z } from 'zod';
-import {
-  MAIL_STATES,
-  VERDICTS,
-  WORDS_KINDS,
-  type GiftMail,
-  type GiftWords,
-} from '#shared/giving/desk-schemas.ts';
+import { MAIL_STATES, TRIES_TO_TELL } from '#shared/mail-states.ts';
+import { VERDICTS, WORDS_KINDS, type GiftMail, type GiftWords } from '#shared/giving/desk-schemas.ts';
 import { NAME_WITHHELD } from '#shared/roles.ts';
 import { queryRows, type Db } from '#server/platform/db.ts';
 import type { GiftHead } from './gift-chain-reads.ts';
@@ -76,8 +71,6 @@ const mailSchema = z.object({
   answer: z.string().nullable(),
 });
 
-/** A letter that the server keeps putting off is for a person to judge; a first delay mends itself. */
-const TRIES_TO_TELL = 3;
 const isOpen = (row: { state: string; tries: number; settled_by: string | null }): boolean =>
   row.settled_by === null &&
   (['hard_failed', 'uncertain'].includes(row.state) ||
@@ -89,7 +82,8 @@ export async function listGiftMails(db: Db, head: GiftHead, reader: Reader): Pro
     to_name: 'm.to_name',
     to_address: 'm.to_address',
     subject: 'm.subject',
-    plain: 'm.plain',
+    // The key in the receipt's address is the giver's alone.
+    plain: `replace(m.plain, g.receipt_token, '…')`,
     answer: 'm.response',
   });
   const rows = await queryRows(

@@ -10,7 +10,9 @@ import {
   giftFilterSchema,
   giftListSchema,
   judgeWordsSchema,
+  PAYMENT_KINDS,
   settleMailSchema,
+  settlePaymentSchema,
 } from '#shared/giving/desk-schemas.ts';
 import { deskPerson, recordAudit, requireRole } from '#server/accounts/index.ts';
 import type { Deps } from '#server/deps.ts';
@@ -21,6 +23,7 @@ import { createCsvStream, readGiftCells } from './gift-csv.ts';
 import { getGiftChain } from './gift-desk-reads.ts';
 import { getGiftList } from './gift-list-reads.ts';
 import { settleLetter } from './letter-desk-service.ts';
+import { settlePayment } from './payment-desk-service.ts';
 import { GIFT_ROLES, PEOPLE_ROLES } from './withheld-names.ts';
 import { judgeWords } from './words-service.ts';
 
@@ -42,6 +45,22 @@ const uuidOf = (text: unknown): string => {
   if (!parsed.success) throw new NotFound();
   return parsed.data;
 };
+
+const settlePaymentRoute =
+  (deps: Deps): RequestHandler =>
+  async (req, res) => {
+    const kind = z.enum(PAYMENT_KINDS).safeParse(req.params.kind);
+    const handle = z.string().min(1).max(255).safeParse(req.params.id);
+    if (!kind.success || !handle.success) throw new NotFound('There is no such payment.');
+    const looked = {
+      ...parse(settlePaymentSchema, req.body ?? {}),
+      kind: kind.data,
+      handle: handle.data,
+      requestId: requestIdOf(res),
+    };
+    await deps.db.transaction((trx) => settlePayment(deps, trx, deskPerson(req), looked));
+    res.json(doneSchema.parse({}));
+  };
 
 const sendCsv =
   (deps: Deps): RequestHandler =>
@@ -98,5 +117,6 @@ export function createGivingDeskRouter(deps: Deps): Router {
     await deps.db.transaction((trx) => settleLetter(deps, trx, deskPerson(req), decision));
     res.json(doneSchema.parse({}));
   });
+  router.post('/payments/:kind/:id/settle', requireRole('treasurer'), settlePaymentRoute(deps));
   return router;
 }

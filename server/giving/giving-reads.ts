@@ -13,16 +13,17 @@ import {
   type GiveOutcome,
   type GiveSheet,
 } from '#shared/giving/give-schemas.ts';
-import { formatPence, NOTHING, subtract, type Pence } from '#shared/money.ts';
+import { add, formatPence, NOTHING, type Pence } from '#shared/money.ts';
 import { sumInWords } from '#shared/sum-words.ts';
 import { getAppealWording, getCampaign } from '#server/campaign/index.ts';
 import type { Deps } from '#server/deps.ts';
 import { Conflict, NotFound } from '#server/platform/errors.ts';
-import { getGivingSettings, getWording } from '#server/society/index.ts';
-import { judgeAnswers, readRules } from './draft-service.ts';
+import { reportError } from '#server/platform/problems.ts';
+import { getGivingSettings } from '#server/society/index.ts';
+import { judgeAnswers, readRules, shownWordings } from './draft-service.ts';
 import { findDraft } from './draft-store.ts';
 import { findGiftIdOfIntent } from './gift-store.ts';
-import { findIntent, findPaidIntentSince, type GiftIntent } from './intent-store.ts';
+import { findIntent, findLikeGiftSince, listOpenIntentsOf, type GiftIntent } from './intent-store.ts';
 import { readReceipt, receiptNumber } from './receipt-reads.ts';
 import { fetchSession, settleSession } from './settle-session.ts';
 import type { Standing } from './standing.ts';
@@ -48,21 +49,17 @@ const definedOnly = (prefill: Prefill): Record<string, string> =>
   );
 
 const stillNeeded = (standing: Standing): Pence =>
-  standing.reach.parts.reduce(
-    (sum, part) => subtract(sum, subtract(NOTHING, part.stillNeededPence)),
-    NOTHING,
-  );
+  add(...standing.reach.parts.map((part) => part.stillNeededPence));
 
 export async function readSheet(deps: Deps, token: string | undefined, prefill: Prefill): Promise<GiveSheet> {
   const now = deps.clock.now();
   const rules = await readRules(deps);
-  const [draft, consent, wording] = await Promise.all([
+  const [draft, wording] = await Promise.all([
     findDraft(deps.db, token),
-    getWording(deps.db, 'consent', now),
     getAppealWording(deps.db, rules.standing.campaign.id, now),
   ]);
   const giftAid = rules.isGiftAidOffered
-    ? { wording: (await getWording(deps.db, 'declaration', now)).words, notice: DECLARATION_NOTICE }
+    ? { wording: rules.declaration.words, notice: DECLARATION_NOTICE }
     : null;
   return giveSheetSchema.parse({
     campaignName: rules.standing.campaign.name,
@@ -73,8 +70,8 @@ export async function readSheet(deps: Deps, token: string | undefined, prefill: 
     whatSumsBuy: rules.standing.campaign.whatSumsBuy,
     partChoice: wording.partChoice,
     giftAid,
-    consentWording: consent.words,
-    answers: typedBefore(draft?.answers ?? {}, prefill),
+    consentWording: rules.consent.words,
+    answers: { ...typedBefore(draft?.answers ?? {}, prefill), shownWordings: shownWordings(rules) },
   });
 }
 
@@ -82,15 +79,20 @@ async function saidBack(deps: Deps, draftId: string, sum: Pence): Promise<string
   const now = deps.clock.now();
   const settings = await getGivingSettings(deps.db, now);
   const said: string[] = [];
+  const confirming = (await listOpenIntentsOf(deps.db, draftId)).find((one) => one.state === 'confirming');
+  if (confirming)
+    said.push(
+      `Your bank has not yet confirmed the ${formatPence(confirming.amountPence)} you gave at ${formatTime(confirming.createdAt)}. Please do not pay a second time; we write to you as soon as we know.`,
+    );
   if (sum >= settings.largeGiftPence)
     said.push(
       `This is a large gift: ${formatPence(sum)}, in words ${sumInWords(sum)}. If that is right, thank you; pay when you are ready.`,
     );
   const since = new Date(now.getTime() - settings.repeatedWithinMinutes * 60_000);
-  const before = await findPaidIntentSince(deps.db, draftId, sum, since);
+  const before = await findLikeGiftSince(deps.db, draftId, sum, since);
   if (before)
     said.push(
-      `You gave ${formatPence(sum)} (${sumInWords(sum)}) from here at ${formatTime(before.createdAt)}. Paying now makes a second gift.`,
+      `You gave ${formatPence(sum)} (${sumInWords(sum)}) from here at ${formatTime(before)}. Paying now makes a second gift.`,
     );
   return said;
 }
@@ -135,18 +137,22 @@ export async function readCheck(deps: Deps, token: string | undefined): Promise<
   });
 }
 
-/** Asks the payment service itself while we do not yet know, so that the page never waits for a webhook. */
-async function bringUpToDate(deps: Deps, intent: GiftIntent): Promise<GiftIntent> {
-  if (!intent.sessionId || !['asked', 'confirming', 'started'].includes(intent.state)) return intent;
+/**
+ * Asks the payment service itself while we do not yet know, so that the page never waits for a webhook.
+ * `isSure` is false when it could not be asked: then nothing is said of what was or was not taken.
+ */
+async function bringUpToDate(
+  deps: Deps,
+  intent: GiftIntent,
+): Promise<{ intent: GiftIntent; isSure: boolean }> {
+  if (!intent.sessionId || !['asked', 'confirming'].includes(intent.state)) return { intent, isSure: true };
   try {
     await settleSession(deps, intent, await fetchSession(deps, intent.sessionId));
   } catch (error) {
-    deps.log.warn(
-      { err: error, intentId: intent.id },
-      'the payment could not be looked up for the return page',
-    );
+    reportError(deps.log, error, { intentId: intent.id, during: 'return page' });
+    return { intent, isSure: false };
   }
-  return (await findIntent(deps.db, intent.id)) ?? intent;
+  return { intent: (await findIntent(deps.db, intent.id)) ?? intent, isSure: true };
 }
 
 const OUTCOME_OF: Record<GiftIntent['state'], GiveOutcome['outcome']> = {
@@ -163,7 +169,7 @@ const OUTCOME_OF: Record<GiftIntent['state'], GiveOutcome['outcome']> = {
 export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOutcome> {
   const found = await findIntent(deps.db, intentId);
   if (!found) throw new NotFound('We know of no gift at this address.');
-  const intent = await bringUpToDate(deps, found);
+  const { intent, isSure } = await bringUpToDate(deps, found);
   const campaign = await getCampaign(deps.db);
   const giftId = await findGiftIdOfIntent(deps.db, intent.id);
   const receipt = giftId ? await readReceipt(deps.db, giftId) : null;
@@ -174,7 +180,7 @@ export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOut
         .first<{ receipt_token: string; number: number }>('receipt_token', 'number')
     : undefined;
   return giveOutcomeSchema.parse({
-    outcome: receipt ? 'paid' : OUTCOME_OF[intent.state],
+    outcome: receipt ? 'paid' : isSure ? OUTCOME_OF[intent.state] : 'confirming',
     campaignName: campaign.name,
     pronoun: campaign.pronoun,
     sumPence: intent.amountPence,

@@ -8,7 +8,7 @@ import { limitTries } from '#server/platform/limits.ts';
 import { parse } from '#server/platform/parse.ts';
 import { beginCheckout } from './checkout-service.ts';
 import { writeDraft } from './draft-service.ts';
-import { makeToken } from './draft-store.ts';
+import { findDraft, makeToken } from './draft-store.ts';
 import { findGiftIdByReceipt } from './gift-store.ts';
 import { readCheck, readOutcome, readSheet } from './giving-reads.ts';
 import { receiptPdf } from './receipt-pdf.ts';
@@ -52,13 +52,19 @@ export function createGiftsRouter(deps: Deps): Router {
     const prefill = sheetQuery.catch({}).parse(req.query);
     res.json(await readSheet(deps, readDraftToken(deps, req), prefill));
   });
-  router.put('/draft', async (req, res) => {
-    const { quiet } = parse(draftQuery, req.query);
-    const token = readDraftToken(deps, req) ?? makeToken();
-    setDraftToken(deps, res, token);
-    await writeDraft(deps, token, req.body, quiet === '1');
-    res.json({});
-  });
+  router.put(
+    '/draft',
+    limitTries(deps, { name: 'draft', points: 600, perSeconds: 600 }),
+    async (req, res) => {
+      const { quiet } = parse(draftQuery, req.query);
+      const brought = readDraftToken(deps, req);
+      // A token we never gave may have been planted, to read along; it is not taken up.
+      const token = brought && (await findDraft(deps.db, brought)) ? brought : makeToken();
+      setDraftToken(deps, res, token);
+      await writeDraft(deps, token, req.body, quiet === '1');
+      res.json({});
+    },
+  );
   router.get('/check', async (req, res) => {
     res.json(await readCheck(deps, readDraftToken(deps, req)));
   });

@@ -118,7 +118,11 @@ export async function markIntent(
   state: IntentState,
   fault: string | null = null,
 ): Promise<void> {
-  await trx('gift_intents').where({ id: intentId }).update({ state, last_fault: fault });
+  // Once paid it stays paid, whatever is told late.
+  await trx('gift_intents')
+    .where({ id: intentId })
+    .whereNot({ state: 'paid' })
+    .update({ state, last_fault: fault });
 }
 
 export async function markChecked(trx: Trx, intentId: string, at: Date): Promise<void> {
@@ -140,41 +144,51 @@ export async function lockIntent(trx: Trx, id: string): Promise<GiftIntent | und
   return row === undefined ? undefined : toIntent(row);
 }
 
-/** The newest attempt of a draft that may still be paid. */
-export async function findOpenIntentOf(db: Db, draftId: string): Promise<GiftIntent | undefined> {
-  const row: unknown = await db('gift_intents')
+/** Attempts of a draft that may still be paid, or are being confirmed; the newest first. */
+export async function listOpenIntentsOf(db: Db, draftId: string): Promise<GiftIntent[]> {
+  const rows: unknown[] = await db('gift_intents')
     .where({ draft_id: draftId })
-    .whereIn('state', ['started', 'asked'])
-    .orderBy('created_at', 'desc')
-    .first();
-  return row === undefined ? undefined : toIntent(row);
+    .whereIn('state', ['started', 'asked', 'confirming'])
+    .orderBy('created_at', 'desc');
+  return rows.map(toIntent);
 }
 
-export async function findPaidIntentSince(
+/** When a gift of this sum last came from the same sheet, if it came since. */
+export async function findLikeGiftSince(
   db: Db,
   draftId: string,
   amountPence: Pence,
   since: Date,
-): Promise<GiftIntent | undefined> {
-  const row: unknown = await db('gift_intents')
-    .where({ draft_id: draftId, state: 'paid', amount_pence: amountPence })
-    .where('created_at', '>=', since)
-    .orderBy('created_at', 'desc')
-    .first();
-  return row === undefined ? undefined : toIntent(row);
+): Promise<Date | undefined> {
+  const row = await db('gifts as g')
+    .join('gift_intents as i', 'i.id', 'g.intent_id')
+    .where({ 'i.draft_id': draftId, 'g.amount_pence': amountPence })
+    .where('g.received_at', '>=', since)
+    .orderBy('g.received_at', 'desc')
+    .first<{ received_at: Date } | undefined>('g.received_at');
+  return row?.received_at;
 }
 
-export async function listOpenIntents(db: Db, limit: number): Promise<GiftIntent[]> {
+/**
+ * Open intents that are due a look: a minute after they began, then less and less often, half an hour apart at
+ * most. Those not looked at for longest come first, so that none waits behind one that cannot be answered.
+ */
+export async function listIntentsDue(db: Db, now: Date, limit: number): Promise<GiftIntent[]> {
   const rows: unknown[] = await db('gift_intents')
     .whereIn('state', ['started', 'asked', 'confirming'])
-    .orderByRaw('checked_at nulls first')
+    .where('created_at', '<=', db.raw(`?::timestamptz - interval '1 minute'`, [now]))
+    .whereRaw(
+      `(checked_at is null or checked_at <= ?::timestamptz
+         - least(greatest((?::timestamptz - created_at) / 4, interval '1 minute'), interval '30 minutes'))`,
+      [now, now],
+    )
+    .orderByRaw('checked_at nulls first, created_at')
     .limit(limit);
   return rows.map(toIntent);
 }
 
-const UUID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/i;
-
 /** By the id we gave the payment service; anything else that comes back is no intent of ours. */
 export async function findIntentByReference(db: Db, reference: string): Promise<GiftIntent | undefined> {
-  return UUID.test(reference) ? findIntent(db, reference) : undefined;
+  const id = z.uuid().safeParse(reference);
+  return id.success ? findIntent(db, id.data) : undefined;
 }

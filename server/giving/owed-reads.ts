@@ -2,6 +2,7 @@
 import { z } from 'zod';
 import { WORDS_KINDS } from '#shared/giving/desk-schemas.ts';
 import { queryRows, toPence, type Db } from '#server/platform/db.ts';
+import { INTENT_HANDLE_SQL, withoutIds } from './payment-handles.ts';
 import {
   allUnlessWithheld,
   nameOrWithheld,
@@ -53,7 +54,7 @@ export const listUnreadWords = (db: Db, reader: Reader): Promise<UnreadWords[]> 
 
 const intentSchema = z
   .object({
-    id: z.uuid(),
+    handle: z.string(),
     state: z.enum(['started', 'asked', 'confirming', 'mismatched']),
     amount_pence: z.unknown().transform(toPence),
     session_id: z.string().nullable(),
@@ -62,11 +63,11 @@ const intentSchema = z
     checked_at: z.date().nullable(),
   })
   .transform((row) => ({
-    id: row.id,
+    handle: row.handle,
     state: row.state,
     sumPence: row.amount_pence,
     sessionId: row.session_id,
-    fault: row.last_fault,
+    fault: withoutIds(row.last_fault),
     since: row.created_at,
     checkedAt: row.checked_at,
   }));
@@ -88,30 +89,38 @@ const eventSchema = z
     objectId: row.object_id,
     state: row.state,
     tries: row.tries,
-    fault: row.fault,
+    fault: withoutIds(row.fault),
     since: row.received_at,
   }));
 export type HangingEvent = z.output<typeof eventSchema>;
 
-/** Payments that neither came nor failed, and what the card service told that is still not worked. */
+/**
+ * Payments that neither came nor failed, and what the card service told that is still not worked. A card page
+ * that its giver left is nothing to do until it has run out and yet nobody was told so.
+ */
 export async function listHangingPayments(
   db: Db,
   now: Date,
 ): Promise<{ intents: HangingIntent[]; events: HangingEvent[] }> {
+  const hourAgo = new Date(now.getTime() - INTENT_HANGS_AFTER_MS);
   const [intents, events] = await Promise.all([
     queryRows(
       db,
       intentSchema,
-      `select id, state, amount_pence, session_id, last_fault, created_at, checked_at from gift_intents
-       where state = 'mismatched' or (state in ('started', 'asked', 'confirming') and created_at < ?)
+      `select ${INTENT_HANDLE_SQL} as handle, state, amount_pence, session_id, last_fault, created_at, checked_at
+       from gift_intents
+       where settled_at is null and (
+         state = 'mismatched'
+         or (state in ('started', 'confirming') and created_at < ?)
+         or (state = 'asked' and coalesce(session_expires_at < ?, created_at < ?)))
        order by created_at limit ?`,
-      [new Date(now.getTime() - INTENT_HANGS_AFTER_MS), MOST_OWED],
+      [hourAgo, now, hourAgo, MOST_OWED],
     ),
     queryRows(
       db,
       eventSchema,
       `select id, type, object_id, state, tries, fault, received_at from payment_events
-       where state = 'refused' or (state = 'waiting' and received_at < ?)
+       where settled_at is null and (state = 'refused' or (state = 'waiting' and received_at < ?))
        order by received_at limit ?`,
       [new Date(now.getTime() - EVENT_HANGS_AFTER_MS), MOST_OWED],
     ),

@@ -3,25 +3,13 @@ import type { Deps } from '#server/deps.ts';
 import { reportError } from '#server/platform/problems.ts';
 import { fetchPayment, postFeeOfPayment } from './fee-service.ts';
 import { listPaymentsWithoutFee } from './gift-store.ts';
-import { listOpenIntents, markChecked, markIntent, saveSession, type GiftIntent } from './intent-store.ts';
+import { listIntentsDue, markChecked, markIntent, saveSession, type GiftIntent } from './intent-store.ts';
 import { fetchSession, settleSession } from './settle-session.ts';
 
 const BATCH = 100;
-const FIRST_LOOK_MS = 60_000;
-const LONGEST_WAIT_MS = 30 * 60_000;
 /** A session whose answer was lost is looked for this long; by then it has run out in any case. */
 const LOST_FOR_GOOD_MS = 25 * 60 * 60_000;
 const CREATED_SLACK_SECONDS = 300;
-
-/** Looks soon at first, then less and less often: a quarter of the intent's age, half an hour at most. */
-function isDue(intent: GiftIntent, now: Date): boolean {
-  const ageMs = now.getTime() - intent.createdAt.getTime();
-  if (intent.checkedAt === null) return ageMs >= FIRST_LOOK_MS;
-  return (
-    now.getTime() - intent.checkedAt.getTime() >=
-    Math.min(Math.max(ageMs / 4, FIRST_LOOK_MS), LONGEST_WAIT_MS)
-  );
-}
 
 /** Our row stands but the call's answer was lost: look for the session by the reference we gave it. */
 async function findLostSession(deps: Deps, intent: GiftIntent): Promise<void> {
@@ -55,6 +43,7 @@ async function lookAt(deps: Deps, intent: GiftIntent): Promise<void> {
     else await findLostSession(deps, intent);
   } catch (error) {
     reportError(deps.log, error, { intentId: intent.id, during: 'poll' });
+    await deps.db.transaction((trx) => markChecked(trx, intent.id, deps.clock.now()));
   }
 }
 
@@ -67,8 +56,6 @@ async function lookForFee(deps: Deps, paymentIntentId: string): Promise<void> {
 }
 
 export async function pollPayments(deps: Deps): Promise<void> {
-  const now = deps.clock.now();
-  for (const intent of await listOpenIntents(deps.db, BATCH))
-    if (isDue(intent, now)) await lookAt(deps, intent);
+  for (const intent of await listIntentsDue(deps.db, deps.clock.now(), BATCH)) await lookAt(deps, intent);
   for (const paymentId of await listPaymentsWithoutFee(deps.db, BATCH)) await lookForFee(deps, paymentId);
 }

@@ -1,7 +1,7 @@
 // A payment becomes a gift, once: giver, shares, books, words, thanks and audit in one transaction.
 import type { Pence } from '#shared/money.ts';
 import { splitGift } from '#shared/giving/split-rules.ts';
-import type { GiveFormFilled } from '#shared/giving/give-schemas.ts';
+import { giveFormSchema, type GiveFormFilled } from '#shared/giving/give-schemas.ts';
 import { recordAudit } from '#server/accounts/index.ts';
 import { postGiftReceived } from '#server/books/index.ts';
 import { getAppealWordingById } from '#server/campaign/index.ts';
@@ -9,7 +9,8 @@ import { keepDeclaration } from '#server/declarations/index.ts';
 import type { Deps } from '#server/deps.ts';
 import type { Trx } from '#server/platform/db.ts';
 import { keepConsents, keepSupporter } from '#server/supporters/index.ts';
-import { forgetAnswers } from './draft-store.ts';
+import { sameAnswers, settleAnswers } from './answers.ts';
+import { forgetAnswers, lockDraftById } from './draft-store.ts';
 import { addGift, addWords, findGiftIdOfIntent, type GiftShare, type NewWords } from './gift-store.ts';
 import { lockIntent, markIntent, type GiftIntent } from './intent-store.ts';
 import { queueGiftThanks } from './thanks-service.ts';
@@ -19,8 +20,9 @@ export type PaidSession = {
   sessionId: string;
   paymentIntentId: string;
   chargeId: string | null;
-  amountPence: Pence;
-  currency: string;
+  /** Each of these must be the intent's, or a person looks at it. */
+  amountsPence: readonly Pence[];
+  currencies: readonly string[];
   paidAt: Date;
 };
 
@@ -106,6 +108,13 @@ async function keepGiver(trx: Trx, intent: GiftIntent, at: Date) {
   return { supporterId: supporter.id, isNew: supporter.isNew, declarationId };
 }
 
+/** A slow payment may be confirmed while its giver fills in another sheet: that one is left alone. */
+async function forgetIfPaid(trx: Trx, draftId: string, paidFor: GiveFormFilled, at: Date): Promise<void> {
+  const draft = await lockDraftById(trx, draftId);
+  const typed = giveFormSchema.safeParse(draft?.answers);
+  if (typed.success && sameAnswers(settleAnswers(typed.data), paidFor)) await forgetAnswers(trx, draftId, at);
+}
+
 async function writeGift(deps: Deps, trx: Trx, intent: GiftIntent, paid: PaidSession): Promise<string> {
   const at = deps.clock.now();
   const { fundId, shares } = await shareOut(trx, intent);
@@ -126,9 +135,9 @@ async function writeGift(deps: Deps, trx: Trx, intent: GiftIntent, paid: PaidSes
     shares,
   });
   await addWords(trx, giftId, wordsOf(intent.answers), at);
-  await postGiftReceived(trx, { giftId, at: paid.paidAt }, shares);
+  await postGiftReceived(trx, { giftId, at: paid.paidAt, recordedAt: at }, shares);
   await markIntent(trx, intent.id, 'paid');
-  if (intent.draftId) await forgetAnswers(trx, intent.draftId, at);
+  if (intent.draftId) await forgetIfPaid(trx, intent.draftId, intent.answers, at);
   await recordAudit(trx, {
     at,
     actor: { kind: 'giver', supporterId: giver.supporterId },
@@ -159,13 +168,12 @@ export async function receiveGift(
   if (!intent) return { kind: 'mismatched' };
   const before = await findGiftIdOfIntent(trx, intentId);
   if (before) return { kind: 'received', giftId: before, isNew: false };
-  if (paid.currency !== 'gbp' || paid.amountPence !== intent.amountPence) {
-    await markIntent(
-      trx,
-      intentId,
-      'mismatched',
-      `paid ${paid.amountPence} ${paid.currency}, asked ${intent.amountPence} gbp`,
-    );
+  const fits =
+    paid.currencies.every((one) => one === 'gbp') &&
+    paid.amountsPence.every((one) => one === intent.amountPence);
+  if (!fits) {
+    const told = `${paid.amountsPence.join('/')} ${paid.currencies.join('/')}`;
+    await markIntent(trx, intentId, 'mismatched', `paid ${told}, asked ${intent.amountPence} gbp`);
     return { kind: 'mismatched' };
   }
   return { kind: 'received', giftId: await writeGift(deps, trx, intent, paid), isNew: true };

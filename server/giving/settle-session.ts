@@ -2,6 +2,7 @@
 import type Stripe from 'stripe';
 import { pence } from '#shared/money.ts';
 import type { Deps } from '#server/deps.ts';
+import { Upstream } from '#server/platform/errors.ts';
 import { checked } from '#server/platform/payments.ts';
 import { lockIntent, markChecked, markIntent, type GiftIntent } from './intent-store.ts';
 import { postFeeOfPayment } from './fee-service.ts';
@@ -12,11 +13,32 @@ const paymentOf = (session: Stripe.Checkout.Session): Stripe.PaymentIntent | nul
 const chargeOf = (payment: Stripe.PaymentIntent | null): Stripe.Charge | null =>
   payment && typeof payment.latest_charge === 'object' ? payment.latest_charge : null;
 
+/** @throws Upstream when the payment service is away or answers what we cannot read. */
 export async function fetchSession(deps: Deps, sessionId: string): Promise<Stripe.Checkout.Session> {
-  const session = await deps.payments.checkout.sessions.retrieve(sessionId, {
-    expand: ['payment_intent.latest_charge.balance_transaction'],
-  });
-  return checked(session, 'checkout.session', sessionId);
+  try {
+    const session = await deps.payments.checkout.sessions.retrieve(sessionId, {
+      expand: ['payment_intent.latest_charge.balance_transaction'],
+    });
+    return checked(session, 'checkout.session', sessionId);
+  } catch (error) {
+    throw toUpstream(deps, error);
+  }
+}
+
+function toUpstream(deps: Deps, error: unknown): unknown {
+  if (!(error instanceof deps.payments.errors.StripeError)) return error;
+  deps.log.warn({ err: error }, 'the card service did not answer as asked');
+  return new Upstream();
+}
+
+/** Closes a card page that nobody may pay any more; when it is past closing, says how it stands. */
+export async function expireSession(deps: Deps, sessionId: string): Promise<Stripe.Checkout.Session> {
+  try {
+    return checked(await deps.payments.checkout.sessions.expire(sessionId), 'checkout.session', sessionId);
+  } catch (error) {
+    if (!(error instanceof deps.payments.errors.StripeInvalidRequestError)) throw toUpstream(deps, error);
+    return fetchSession(deps, sessionId);
+  }
 }
 
 function paidPart(deps: Deps, session: Stripe.Checkout.Session): PaidSession | null {
@@ -27,9 +49,9 @@ function paidPart(deps: Deps, session: Stripe.Checkout.Session): PaidSession | n
     sessionId: session.id,
     paymentIntentId: payment.id,
     chargeId: charge?.id ?? null,
-    // What was truly received, in our own currency; compared with the intent before anything is posted.
-    amountPence: pence(payment.amount_received),
-    currency: session.currency ?? payment.currency,
+    // What was asked and what was truly received, each with its own currency; a payer may be shown another.
+    amountsPence: [pence(payment.amount_received), pence(session.amount_total ?? -1)],
+    currencies: [payment.currency, session.currency ?? 'none'],
     paidAt: charge ? new Date(charge.created * 1000) : deps.clock.now(),
   };
 }

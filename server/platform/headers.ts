@@ -4,6 +4,8 @@ import helmet from 'helmet';
 import type { Config } from './config.ts';
 
 const YEAR_SECONDS = 31_536_000;
+/** What belongs to one person or to the desk stays out of every search engine, even where a link was passed on. */
+const NOT_FOR_SEARCH = /^\/(receipts|desk|api|give\/done)(\/|$)/i;
 
 export function securityHeaders(config: Config): RequestHandler[] {
   return [
@@ -27,12 +29,14 @@ export function securityHeaders(config: Config): RequestHandler[] {
               ...(config.cookie.isSecure && { upgradeInsecureRequests: [] }),
             },
           },
+      // For this host alone: other names under the society's domain may be other people's, and without TLS.
       strictTransportSecurity: config.cookie.isSecure
-        ? { maxAge: YEAR_SECONDS, includeSubDomains: true }
+        ? { maxAge: YEAR_SECONDS, includeSubDomains: false }
         : false,
       referrerPolicy: { policy: 'no-referrer' },
     }),
-    (_req, res, next) => {
+    (req, res, next) => {
+      if (NOT_FOR_SEARCH.test(req.path)) res.setHeader('X-Robots-Tag', 'noindex');
       res.setHeader('Permissions-Policy', 'camera=(), geolocation=(), microphone=(), payment=(self)');
       next();
     },

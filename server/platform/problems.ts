@@ -4,7 +4,7 @@ import { z } from 'zod';
 import type { Problem } from '#shared/errors.ts';
 import { isDatabaseAway } from './db.ts';
 import { AppError, NotFound } from './errors.ts';
-import type { Log } from './log.ts';
+import { maskSecrets, type Log } from './log.ts';
 
 const TITLES: Record<Problem['code'], string> = {
   invalid: 'Some answers need putting right',
@@ -64,8 +64,9 @@ export function toProblem(error: unknown, requestId?: string): Problem {
 /** The one place where faults of routes, webhooks and jobs are reported. */
 export function reportError(log: Log, error: unknown, where: Record<string, unknown>): void {
   const known = toAppError(error);
-  if (known.status >= 500) log.error({ err: error, ...where }, known.message);
-  else log.debug({ code: known.code, ...where }, known.message);
+  const told = typeof where.path === 'string' ? { ...where, path: maskSecrets(where.path) } : where;
+  if (known.status >= 500) log.error({ err: error, ...told }, known.message);
+  else log.debug({ code: known.code, ...told }, known.message);
 }
 
 export const requestIdOf = (res: Response): string | undefined => {

@@ -1,9 +1,3 @@
 // What other rooms may use of supporters and their consents.
-export {
-  CHANNELS,
-  keepConsents,
-  keepSupporter,
-  listConsents,
-  type Channel,
-  type KeptConsent,
-} from './supporters-service.ts';
+export { keepSupporter } from './supporters-service.ts';
+export { CHANNELS, keepConsents, listConsents, type Channel, type KeptConsent } from './consents-service.ts';

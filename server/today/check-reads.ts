@@ -1,4 +1,4 @@
-// The nightly checks that a person must know of: those that found something, and those that stand still.
+// The nightly checks that a person must know of: those that found something, stand still or never ran.
 import { z } from 'zod';
 import { queryRows, type Db } from '#server/platform/db.ts';
 
@@ -18,6 +18,19 @@ const runSchema = z
     detail: row.detail.map((one) => `${one.fault} (${one.id})`),
   }));
 export type FailedCheck = z.output<typeof runSchema>;
+
+const nameSchema = z.object({ name: z.string() });
+
+/** Checks that the database knows and that have not run yet. */
+export async function listNeverRunChecks(db: Db): Promise<string[]> {
+  const rows = await queryRows(
+    db,
+    nameSchema,
+    `select viewname as name from pg_views
+     where schemaname = 'checks' and viewname not in (select name from check_runs) order by 1`,
+  );
+  return rows.map((row) => row.name);
+}
 
 /** The last run of each check, when it found faults or lies more than a night back. */
 export const listFailedChecks = (db: Db, now: Date): Promise<FailedCheck[]> =>

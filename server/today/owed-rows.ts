@@ -1,11 +1,11 @@
 // Says in words what is owed to whom, how long it has waited and what is to be done. Pure.
 import { addDays, dayOf, daysBetween, formatMoment, formatTime, type Day } from '#shared/dates.ts';
+import type { PaymentKind } from '#shared/giving/desk-schemas.ts';
 import { WORDS_KIND_WORDS } from '#shared/giving/desk-words.ts';
 import { formatPence } from '#shared/money.ts';
 import type { OwedRow } from '#shared/today/today-schemas.ts';
 import type { HangingEvent, HangingIntent, LetterSubject, UnreadWords } from '#server/giving/index.ts';
 import type { MailLine } from '#server/platform/mail/index.ts';
-import type { FailedCheck } from './check-reads.ts';
 
 /** Words from the public are read within this many days. */
 const WORDS_WITHIN_DAYS = 3;
@@ -97,28 +97,36 @@ export function mailRow(
 
 const INTENT_WORDS: Record<HangingIntent['state'], string> = {
   started: 'was asked for, but no card page was opened',
-  asked: 'stands at the card page',
+  asked: 'had a card page that has run out, and the card service has not said what became of it',
   confirming: 'is still being confirmed by the bank',
   mismatched: 'does not agree with what was asked for: nothing was posted',
 };
 
-export function intentRow(intent: HangingIntent, now: Date): OwedRow {
+type PaymentReader = { now: Date; maySettle: boolean };
+
+/** What nobody but the treasurer can end; everything else about payments ends by itself. */
+const lookOr = (isSettled: boolean, paymentKind: PaymentKind, paymentId: string): OwedRow['action'] =>
+  isSettled
+    ? { kind: 'settle', label: 'Settle', paymentKind, paymentId }
+    : { kind: 'look', label: 'See more' };
+
+export function intentRow(intent: HangingIntent, { now, maySettle }: PaymentReader): OwedRow {
   return {
-    id: `payment-${intent.id}`,
+    id: `payment-${intent.handle}`,
     ...tellWait(intent.since, now, intent.state === 'mismatched' ? 0 : 1),
     what: `A payment of ${formatPence(intent.sumPence)} ${INTENT_WORDS[intent.state]}`,
     owedTo: intent.state === 'mismatched' ? 'the giver and the books' : 'the books',
     detail: [
-      `Begun ${formatMoment(intent.since)}, reference ${intent.id}`,
+      `Begun ${formatMoment(intent.since)}`,
       ...(intent.sessionId ? [`Card page ${intent.sessionId}`] : []),
       ...(intent.checkedAt ? [`Last asked of the card service ${formatMoment(intent.checkedAt)}`] : []),
       ...(intent.fault ? [`Found: ${intent.fault}`] : []),
     ],
-    action: { kind: 'look', label: 'See more' },
+    action: lookOr(maySettle && intent.state === 'mismatched', 'intent', intent.handle),
   };
 }
 
-export function eventRow(event: HangingEvent, now: Date): OwedRow {
+export function eventRow(event: HangingEvent, { now, maySettle }: PaymentReader): OwedRow {
   const stands = event.state === 'refused' ? 'was refused' : 'has not been worked';
   return {
     id: `event-${event.id}`,
@@ -130,40 +138,6 @@ export function eventRow(event: HangingEvent, now: Date): OwedRow {
       `Tried ${event.tries} times`,
       ...(event.fault ? [event.fault] : []),
     ],
-    action: { kind: 'look', label: 'See more' },
+    action: lookOr(maySettle && event.state === 'refused', 'event', event.id),
   };
-}
-
-const checkName = (check: FailedCheck): string => check.name.replaceAll('_', ' ');
-
-export function failedCheckRow(check: FailedCheck, now: Date): OwedRow {
-  const count = check.faults === 1 ? '1 fault' : `${check.faults} faults`;
-  return {
-    id: `check-${check.name}`,
-    ...tellWait(check.ranAt, now, 0),
-    what: `The nightly check “${checkName(check)}” found ${count}`,
-    owedTo: 'the books',
-    detail: check.detail,
-    action: { kind: 'look', label: 'See more' },
-  };
-}
-
-/** Checks stand still together, most likely because the worker does: one row, not one each. */
-export function stillChecksRow(checks: readonly FailedCheck[], now: Date): OwedRow[] {
-  const [oldest] = checks;
-  if (!oldest) return [];
-  const which =
-    checks.length === 1
-      ? `The nightly check “${checkName(oldest)}” has`
-      : `${checks.length} nightly checks have`;
-  return [
-    {
-      id: 'checks-still',
-      ...tellWait(oldest.ranAt, now, 0),
-      what: `${which} not run since ${formatMoment(oldest.ranAt)}`,
-      owedTo: 'the books',
-      detail: checks.map((one) => `${checkName(one)}, last run ${formatMoment(one.ranAt)}`),
-      action: { kind: 'look', label: 'See more' },
-    },
-  ];
 }

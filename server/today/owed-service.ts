@@ -12,8 +12,9 @@ import {
 } from '#server/giving/index.ts';
 import type { Db } from '#server/platform/db.ts';
 import { listOwedMail } from '#server/platform/mail/index.ts';
-import { listFailedChecks } from './check-reads.ts';
-import { eventRow, failedCheckRow, intentRow, mailRow, stillChecksRow, wordsRow } from './owed-rows.ts';
+import { listFailedChecks, listNeverRunChecks } from './check-reads.ts';
+import { failedCheckRow, neverRunRow, stillChecksRow } from './check-rows.ts';
+import { eventRow, intentRow, mailRow, wordsRow } from './owed-rows.ts';
 
 const HISTORY_MS = 24 * 60 * 60_000;
 const HISTORY_LINES = 12;
@@ -38,22 +39,25 @@ const soonestFirst = (one: OwedRow, other: OwedRow): number =>
 /** Nothing of gifts for those who do not read gifts. */
 export async function listOwed(db: Db, person: Reader, now: Date): Promise<OwedRow[]> {
   if (!mayReadGifts(person)) return [];
-  const [words, payments, letters, checks] = await Promise.all([
+  const reader = { now, maySettle: person.roles.includes('treasurer') };
+  const [words, payments, letters, checks, neverRun] = await Promise.all([
     listUnreadWords(db, person),
     listHangingPayments(db, now),
     owedLetters(db, person, now),
     listFailedChecks(db, now),
+    listNeverRunChecks(db),
   ]);
   return [
     ...words.map((one) => wordsRow(one, now, mayAct(person, one.isWithheld))),
-    ...payments.intents.map((one) => intentRow(one, now)),
-    ...payments.events.map((one) => eventRow(one, now)),
+    ...payments.intents.map((one) => intentRow(one, reader)),
+    ...payments.events.map((one) => eventRow(one, reader)),
     ...letters,
     ...checks.filter((one) => one.faults > 0).map((one) => failedCheckRow(one, now)),
     ...stillChecksRow(
       checks.filter((one) => one.faults === 0),
       now,
     ),
+    ...neverRunRow(neverRun, now),
   ].sort(soonestFirst);
 }
 

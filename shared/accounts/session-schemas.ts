@@ -22,7 +22,7 @@ export const sessionSchema = z.object({
   token: z.string().nullable(),
 });
 export type Session = z.infer<typeof sessionSchema>;
-export const TOKEN_HEADER = 'X-Treenail-Token';
+export { TOKEN_HEADER } from './token-header.ts';
 
 export const SIGNED_OUT: Session = { person: null, step: 'signed-out', token: null };
 

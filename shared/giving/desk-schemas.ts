@@ -1,6 +1,7 @@
 // What the desk asks of gifts and is told: the filter in the address bar, the ledger list, one gift's chain.
 import { z } from 'zod';
 import { daySchema } from '#shared/dates.ts';
+import { MAIL_STATES } from '#shared/mail-states.ts';
 import { penceSchema } from '#shared/money.ts';
 
 export const GIFT_SORTS = ['newest', 'oldest', 'largest'] as const;
@@ -128,16 +129,6 @@ export const giftWordsSchema = z.object({
 });
 export type GiftWords = z.infer<typeof giftWordsSchema>;
 
-export const MAIL_STATES = [
-  'queued',
-  'claimed',
-  'handing_over',
-  'sent',
-  'soft_failed',
-  'hard_failed',
-  'suppressed',
-  'uncertain',
-] as const;
 export const giftMailSchema = z.object({
   id: z.uuid(),
   kind: z.string(),
@@ -241,5 +232,18 @@ export const settleMailSchema = z.strictObject({
   decision: z.enum(SETTLE_DECISIONS, 'Choose to send it again or to leave it.'),
 });
 export type SettleMail = z.infer<typeof settleMailSchema>;
+
+/** What of a payment stands still until the treasurer has looked: a payment that does not agree, a refused event. */
+export const PAYMENT_KINDS = ['intent', 'event'] as const;
+export type PaymentKind = (typeof PAYMENT_KINDS)[number];
+export const MOST_REASON_LETTERS = 500;
+export const settlePaymentSchema = z.strictObject({
+  reason: z
+    .string('Write how it was put right.')
+    .trim()
+    .min(1, 'Write how it was put right.')
+    .max(MOST_REASON_LETTERS, `Write at most ${MOST_REASON_LETTERS} letters.`),
+});
+export type SettlePayment = z.infer<typeof settlePaymentSchema>;
 
 export const doneSchema = z.object({});

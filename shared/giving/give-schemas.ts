@@ -51,6 +51,8 @@ export const giveFormSchema = z.strictObject({
   byEmail: tick,
   byPost: tick,
   byPhone: tick,
+  /** The versions of declaration and consent that stood on the sheet, as `declaration.consent`; never typed. */
+  shownWordings: line(20, 'Load the page again.').default(''),
   message: line(600, 'Make the message shorter.').default(''),
 });
 export type GiveForm = z.input<typeof giveFormSchema>;

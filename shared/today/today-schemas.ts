@@ -1,7 +1,7 @@
 // What Today shows: one row for each thing that is owed, soonest first, each with one action.
 import { z } from 'zod';
 import { daySchema } from '#shared/dates.ts';
-import { historyLineSchema, WORDS_KINDS } from '#shared/giving/desk-schemas.ts';
+import { historyLineSchema, PAYMENT_KINDS, WORDS_KINDS } from '#shared/giving/desk-schemas.ts';
 
 export const owedActionSchema = z.discriminatedUnion('kind', [
   /** Words that may be passed from Today itself with one press. */
@@ -15,6 +15,13 @@ export const owedActionSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('open'), label: z.string(), path: z.string() }),
   /** Nothing to open elsewhere: what is known unfolds in the row. */
   z.object({ kind: z.literal('look'), label: z.string() }),
+  /** The same, and below it the treasurer's reason, with which the row is settled. */
+  z.object({
+    kind: z.literal('settle'),
+    label: z.string(),
+    paymentKind: z.enum(PAYMENT_KINDS),
+    paymentId: z.string(),
+  }),
 ]);
 export type OwedAction = z.infer<typeof owedActionSchema>;
 

@@ -16,7 +16,7 @@ const NAMES_OFF = {
 } as const;
 
 function DedicationAnswers({ answers }: { answers: GiveCheck['answers'] }) {
-  const { dedication, dedicationName, contactName, contactEmail, contactSum } = answers;
+  const { dedication, dedicationName, contactName, contactEmail, contactSum, wall } = answers;
   if (dedication === 'none')
     return (
       <AnswerRow name={DEDICATIONS.none} changeTo="/give#dedication">
@@ -30,7 +30,11 @@ function DedicationAnswers({ answers }: { answers: GiveCheck['answers'] }) {
       </AnswerRow>
       <AnswerRow name="Whom we tell" changeTo="/give#contactName">
         {contactName
-          ? `${contactName}, ${contactEmail}. ${contactSum === 'on' ? 'With the sum.' : 'Without the sum.'}`
+          ? [
+              `${contactName}, ${contactEmail}.`,
+              contactSum === 'on' ? 'With the sum.' : 'Without the sum.',
+              wall === 'treasurer-only' ? 'Without your name.' : 'They are told your name.',
+            ].join(' ')
           : 'Nobody'}
       </AnswerRow>
     </>

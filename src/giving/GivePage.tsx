@@ -73,6 +73,11 @@ export function GivePage() {
         noValidate
         onSubmit={(event) => void press(event)}
       >
+        <input
+          type="hidden"
+          {...controls.form.register('shownWordings')}
+          defaultValue={sheet.answers.shownWordings}
+        />
         <AmountRow controls={controls} note={sheet.whatSumsBuy} number={1} />
         <TowardsRow controls={controls} sheet={sheet} number={2} />
         <DedicationRow controls={controls} number={3} />

@@ -1,6 +1,5 @@
 // A receipt as a page: it reads on a screen and prints on one sheet.
 import { useLoaderData } from 'react-router-dom';
-import { formatDay } from '#shared/dates.ts';
 import type { Receipt } from '#shared/giving/give-schemas.ts';
 import { formatPence } from '#shared/money.ts';
 import { AnswerRow } from '#src/ui/AnswerRow.tsx';
@@ -14,7 +13,7 @@ function ReceiptAnswers({ receipt }: { receipt: Receipt }) {
   return (
     <dl className="answers">
       <AnswerRow name="Received from">{receipt.name}</AnswerRow>
-      <AnswerRow name="On">{formatDay(receipt.givenOn)}</AnswerRow>
+      <AnswerRow name="On">{receipt.givenOn}</AnswerRow>
       <AnswerRow name="Sum">
         <b>{formatPence(receipt.sumPence)}</b>, by card
       </AnswerRow>
@@ -38,7 +37,7 @@ function Declaration({ declaration }: { declaration: NonNullable<Receipt['declar
       <div className="fields">
         <p className="declared">{declaration.wording}</p>
         <p className="sans small">
-          Declared by {declaration.name}, {declaration.address}, on {formatDay(declaration.givenOn)}.
+          Declared by {declaration.name}, {declaration.address}, on {declaration.givenOn}.
         </p>
       </div>
       <p className="note">

@@ -73,11 +73,23 @@ export function backToSheet(error: unknown): string | undefined {
   return reason === 'no-draft' || status === 404 ? START_AGAIN : undefined;
 }
 
-const PAY_TROUBLE_NAMES: Record<number, string> = { 409: 'words', 429: 'many', 502: 'away' };
-const payTroublePath = (status: number) => `/give/check?trouble=${PAY_TROUBLE_NAMES[status] ?? 'fault'}`;
+const STATUS_TROUBLES: Record<number, string> = { 429: 'too-many', 502: 'away' };
+const payTroublePath = (error: unknown, status: number) => {
+  const reason = error instanceof ApiProblem ? (error.problem.reason ?? '') : '';
+  return `/give/check?trouble=${reason in PAY_TROUBLES ? reason : (STATUS_TROUBLES[status] ?? 'fault')}`;
+};
 const PAY_TROUBLES: Record<string, PressTrouble> = {
-  words: { heading: 'The words of the appeal have changed since you saw them. Please look once more.' },
-  many: { heading: 'Too many tries came from here. Nothing was taken. Wait a little and try again.' },
+  'wording-changed': {
+    heading: 'The words of the appeal have changed since you saw them. Please look once more.',
+  },
+  'still-confirming': {
+    heading:
+      'Your bank has not yet confirmed the gift you made a moment ago. Please do not pay a second time.',
+  },
+  'already-paid': {
+    heading: 'This gift is paid already, and the receipt is on its way. Nothing more was taken.',
+  },
+  'too-many': { heading: 'Too many tries came from here. Nothing was taken. Wait a little and try again.' },
   away: { heading: 'The card service did not answer. Nothing was taken. Try again in a minute.' },
   fault: OUR_FAULT,
 };
@@ -95,7 +107,7 @@ export async function pressPay({ api }: RouteContext, request: Request) {
     if (sheet !== undefined) return redirect(sheet, SEE_OTHER);
     const { trouble, status } = troubleOf(error);
     const isFull = error instanceof ApiProblem && error.problem.reason === 'part-full';
-    if (isOnServer) return redirect(isFull ? UNFINISHED : payTroublePath(status), SEE_OTHER);
+    if (isOnServer) return redirect(isFull ? UNFINISHED : payTroublePath(error, status), SEE_OTHER);
     return data<PressTrouble>({ ...trouble, ...(isFull && { changeTo: '/give#towards' }) }, { status });
   }
 }

@@ -28,6 +28,7 @@ const EMPTY: FormTexts = {
   byEmail: '',
   byPost: '',
   byPhone: '',
+  shownWordings: '',
   message: '',
 };
 

@@ -16,6 +16,7 @@ export const GIVE_LABELS: Record<GiveField, string> = {
   contactSum: 'Tell them the sum',
   wall: 'The givers’ wall',
   wallWords: 'Words on the wall',
+  shownWordings: 'The words of this page',
   message: 'A message',
   name: 'Full name',
   greeting: 'How should we greet you?',

@@ -1,12 +1,12 @@
 // The Api as the browser asks it: fetch on our own address, with the session's token where there is one.
 import type { QueryClient } from '@tanstack/react-query';
 import { z } from 'zod';
+import { TOKEN_HEADER } from '#shared/accounts/token-header.ts';
 import { NoAnswer, type Api } from './api.ts';
 import { createApi, type Exchange } from './create-api.ts';
 
 /** The query under which the session stands; its answer carries the token that changes must show. */
 export const SESSION_KEY = ['session'] as const;
-const TOKEN_HEADER = 'X-Treenail-Token';
 const tokenSchema = z.object({ token: z.string() });
 
 function tokenHeader(queryClient: QueryClient): Record<string, string> {

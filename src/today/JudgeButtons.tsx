@@ -3,16 +3,10 @@ import { useQueryClient } from '@tanstack/react-query';
 import type { OwedAction } from '#shared/today/today-schemas.ts';
 import { WORDS_KIND_WORDS } from '#shared/giving/desk-words.ts';
 import { useJudgeWords } from '#src/giving/desk/gift-desk-queries.ts';
+import { focusNextThing } from './focus-next-thing.ts';
 import { TODAY } from './today-queries.ts';
 
 type Props = { action: Extract<OwedAction, { kind: 'judge' }>; isNext: boolean };
-
-/** The row that had the cursor has left the list: the next thing to do gets it, or the page when all is done. */
-function focusNextThing(): void {
-  if (document.activeElement !== document.body && document.activeElement !== null) return;
-  const next = document.querySelector<HTMLElement>('.daylist .do :is(a, button)');
-  (next ?? document.getElementById('sheet'))?.focus();
-}
 
 export function JudgeButtons({ action, isNext }: Props) {
   const queryClient = useQueryClient();

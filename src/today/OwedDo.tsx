@@ -1,4 +1,4 @@
-// The one thing to do about what is owed: judge words at once, open its page, or see what is known.
+// The one thing to do about what is owed: judge words at once, open its page, or see what is known and settle it.
 import { Link } from 'react-router-dom';
 import type { OwedRow } from '#shared/today/today-schemas.ts';
 import { JudgeButtons } from './JudgeButtons.tsx';
@@ -19,6 +19,7 @@ export function OwedDo({ row: { id, what, action }, isNext, isOpen, onLook }: Pr
         </Link>
       );
     case 'look':
+    case 'settle':
       return (
         <button
           type="button"

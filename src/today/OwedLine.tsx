@@ -3,6 +3,7 @@ import { useState, type ReactNode } from 'react';
 import { formatDay, weekdayOf, type Day } from '#shared/dates.ts';
 import type { OwedRow } from '#shared/today/today-schemas.ts';
 import { OwedDo } from './OwedDo.tsx';
+import { SettlePayment } from './SettlePayment.tsx';
 import { Tally } from './Tally.tsx';
 
 type Props = { row: OwedRow; isNext: boolean; dayHead: ReactNode };
@@ -22,11 +23,14 @@ export function OwedLine({ row, isNext, dayHead }: Props) {
       <td role="cell" className="what">
         {row.what} <span className="to">owed to {row.owedTo}</span>
         {isOpen && (
-          <ul className="more" id={`more-${row.id}`}>
-            {row.detail.map((line) => (
-              <li key={line}>{line}</li>
-            ))}
-          </ul>
+          <div className="more" id={`more-${row.id}`}>
+            <ul>
+              {row.detail.map((line) => (
+                <li key={line}>{line}</li>
+              ))}
+            </ul>
+            {row.action.kind === 'settle' && <SettlePayment action={row.action} />}
+          </div>
         )}
       </td>
       <td role="cell" className="waited">

@@ -128,12 +128,16 @@ describe('a gift and its fee', () => {
   test('post once, whatever is repeated', async () => {
     const giftId = randomUUID();
     const shares = [{ fundId: figure, amountPence: pence(2_000) }];
-    const post = () => db.transaction((trx) => postGiftReceived(trx, { giftId, at }, shares));
+    const post = () => db.transaction((trx) => postGiftReceived(trx, { giftId, at, recordedAt: at }, shares));
     expect([await post(), await post()]).toEqual([true, false]);
     const [one, other] = await Promise.all(
       [1, 2].map(() =>
         db.transaction((trx) =>
-          postCardFee(trx, { giftId, at }, { feePence: pence(50), shares, bornByFundId: null }),
+          postCardFee(
+            trx,
+            { giftId, at, recordedAt: at },
+            { feePence: pence(50), shares, bornByFundId: null },
+          ),
         ),
       ),
     );
@@ -146,9 +150,9 @@ describe('a gift and its fee', () => {
       { fundId: figure, amountPence: pence(333) },
       { fundId: general, amountPence: pence(667) },
     ];
-    await db.transaction((trx) => postGiftReceived(trx, { giftId, at }, shares));
+    await db.transaction((trx) => postGiftReceived(trx, { giftId, at, recordedAt: at }, shares));
     await db.transaction((trx) =>
-      postCardFee(trx, { giftId, at }, { feePence: pence(35), shares, bornByFundId: null }),
+      postCardFee(trx, { giftId, at, recordedAt: at }, { feePence: pence(35), shares, bornByFundId: null }),
     );
     const lines = await db('books.lines as l')
       .join('books.entries as e', 'e.id', 'l.entry_id')
@@ -161,9 +165,13 @@ describe('a gift and its fee', () => {
   test('a setting lets one fund bear it', async () => {
     const giftId = randomUUID();
     const shares = [{ fundId: figure, amountPence: pence(1_000) }];
-    await db.transaction((trx) => postGiftReceived(trx, { giftId, at }, shares));
+    await db.transaction((trx) => postGiftReceived(trx, { giftId, at, recordedAt: at }, shares));
     await db.transaction((trx) =>
-      postCardFee(trx, { giftId, at }, { feePence: pence(35), shares, bornByFundId: general }),
+      postCardFee(
+        trx,
+        { giftId, at, recordedAt: at },
+        { feePence: pence(35), shares, bornByFundId: general },
+      ),
     );
     const funds = await db('books.lines as l')
       .join('books.entries as e', 'e.id', 'l.entry_id')
@@ -176,7 +184,9 @@ describe('a gift and its fee', () => {
 
 test('every check can fail: an entry for no gift is found', async () => {
   await db.transaction((trx) =>
-    postGiftReceived(trx, { giftId: randomUUID(), at }, [{ fundId: figure, amountPence: pence(5) }]),
+    postGiftReceived(trx, { giftId: randomUUID(), at, recordedAt: at }, [
+      { fundId: figure, amountPence: pence(5) },
+    ]),
   );
   const found = (await runChecks(db)).filter((one) => one.faults.length > 0).map((one) => one.name);
   expect(found).toContain('entries_have_gifts');

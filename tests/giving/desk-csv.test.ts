@@ -1,5 +1,6 @@
 // The list of gifts as CSV: whole, and harmless to whoever opens it.
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { pence } from '#shared/money.ts';
 import { addGift } from './desk-rows.ts';
 import { openDesk, type Desk } from './desk-app.ts';
 
@@ -24,7 +25,12 @@ describe('the CSV', () => {
       'Łódź Żółć',
     ];
     for (const name of names)
-      await addGift(desk.db, desk.world, { name, part: 'lantern', at: new Date('2026-02-01T10:00:00Z') });
+      await addGift(desk.db, desk.world, {
+        name,
+        part: 'lantern',
+        at: new Date('2026-02-01T10:00:00Z'),
+        ...(name === '+1+1' && { sumPence: pence(123_405) }),
+      });
     const answer = await desk
       .as('treasurer')
       .get('/api/desk/gifts.csv?from=2026-02-01&to=2026-02-01&sort=oldest');
@@ -46,6 +52,7 @@ describe('the CSV', () => {
         'Łódź Żółć',
         '2026-02-01',
         '20.00',
+        '1234.05',
       ]),
     );
     expect(cells).toHaveLength((names.length + 1) * 11);

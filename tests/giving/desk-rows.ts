@@ -129,6 +129,7 @@ export type AddedGift = {
   mailId: string | null;
   paymentIntentId: string;
   sessionId: string;
+  receiptToken: string;
 };
 
 const ADDRESS = { address_line1: '14 Sluice Row', town: 'Brackenhythe', postcode: 'BK4 7HY', country: 'GB' };
@@ -222,6 +223,7 @@ export async function addMail(
     at: Date;
     tries?: number;
     address?: string;
+    more?: string;
   },
 ): Promise<string> {
   const id = randomUUID();
@@ -236,7 +238,7 @@ export async function addMail(
     to_address: mail.address ?? 'judith@sluice.example',
     subject: `Thank you, ${toName}`,
     html: `<p>Dear ${toName}</p>`,
-    plain: `Dear ${toName},\n\nThank you.`,
+    plain: `Dear ${toName},\n\nThank you.\n\n${mail.more ?? ''}`,
     state: mail.state ?? 'sent',
     tries: mail.tries ?? 1,
     sent_at: mail.state === undefined || mail.state === 'sent' ? mail.at : null,
@@ -281,9 +283,10 @@ export async function addGift(db: Db, world: World, given: GiftWish = {}): Promi
   const intent = await addIntent(db, world, wish);
   const { supporterId, declarationId } = await addGiver(db, world, wish, intent.id);
   const paymentIntentId = `pi_${randomUUID()}`;
+  const receiptToken = randomUUID();
   const [gift] = await db('gifts')
     .insert({
-      receipt_token: randomUUID(),
+      receipt_token: receiptToken,
       intent_id: intent.id,
       supporter_id: supporterId,
       appeal_wording_id: world.appealId,
@@ -308,7 +311,7 @@ export async function addGift(db: Db, world: World, given: GiftWish = {}): Promi
     amount_pence: wish.sumPence,
   });
   await db.transaction((trx) =>
-    postGiftReceived(trx, { giftId: gift.id, at: wish.at }, [
+    postGiftReceived(trx, { giftId: gift.id, at: wish.at, recordedAt: wish.at }, [
       { fundId: world.fundId, amountPence: wish.sumPence },
     ]),
   );
@@ -338,6 +341,7 @@ export async function addGift(db: Db, world: World, given: GiftWish = {}): Promi
           toName: wish.name,
           at: wish.at,
           address: wish.email,
+          more: `Your receipt: https://lampwoman.example/receipts/${receiptToken}`,
         });
   return {
     ...gift,
@@ -347,5 +351,6 @@ export async function addGift(db: Db, world: World, given: GiftWish = {}): Promi
     mailId,
     paymentIntentId,
     sessionId: intent.sessionId,
+    receiptToken,
   };
 }

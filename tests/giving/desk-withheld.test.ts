@@ -3,6 +3,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { giftChainSchema, giftListSchema } from '#shared/giving/desk-schemas.ts';
 import { pence } from '#shared/money.ts';
 import { NAME_WITHHELD } from '#shared/roles.ts';
+import { keepCheckRun, runChecks } from '#server/books/index.ts';
 import { signIn } from './desk-people.ts';
 import { addGift, addMail, type AddedGift } from './desk-rows.ts';
 import { openDesk, type Desk } from './desk-app.ts';
@@ -113,6 +114,59 @@ describe('a giver known to the treasurer only', () => {
         ]);
         expect(chain.mails.some((mail) => mail.maySettle)).toBe(false);
       }
+    },
+  );
+
+  it.each(['chair', 'secretary', 'examiner', 'treasurer'] as const)(
+    'is never opened to the %s by an intent’s id or a receipt’s key, nor is any other giver',
+    async (role) => {
+      const open = await addGift(desk.db, desk.world, { name: 'Open Olive' });
+      const stuck: AddedGift[] = [];
+      for (const state of ['mismatched', 'started', 'asked', 'confirming', 'paid']) {
+        const gift = await addGift(desk.db, desk.world, {
+          name: 'Hidden Hollis',
+          nameShown: 'treasurer-only',
+        });
+        await desk
+          .db('gift_intents')
+          .where({ id: gift.intentId })
+          .update({ state, last_fault: `not that of ${gift.intentId}` });
+        stuck.push(gift);
+      }
+      const [nameless, , , , lost] = stuck;
+      if (!nameless || !lost) throw new Error('no gift');
+      await desk.db('gift_intents').where({ id: nameless.intentId }).update({ session_id: null });
+      await desk.db('gift_shares').where({ gift_id: lost.id }).delete();
+      await desk.db('gifts').where({ id: lost.id }).delete();
+      await desk.db('payment_events').insert({
+        id: `evt_refused_${open.id}`,
+        type: 'checkout.session.completed',
+        object_kind: 'checkout.session',
+        object_id: open.sessionId,
+        happened_at: new Date(),
+        received_at: new Date(),
+        payload: '{}',
+        state: 'refused',
+        fault: `no gift for ${open.intentId}`,
+      });
+      const results = await runChecks(desk.db);
+      expect(results.flatMap((one) => one.faults.map((fault) => fault.id))).toContain(lost.sessionId);
+      await desk.db.transaction((trx) => keepCheckRun(trx, results, desk.app.clock.now()));
+      const gifts = [...hidden, open, ...stuck];
+      const answers = await Promise.all(
+        [
+          '/api/desk/gifts',
+          '/api/desk/gifts.csv',
+          '/api/desk/today',
+          ...gifts.filter((gift) => gift !== lost).map((gift) => `/api/desk/gifts/${gift.number}`),
+        ].map((path) => desk.as(role).get(path).expect(200)),
+      );
+      const told = answers.map((answer) => answer.text).join('');
+      expect(told).toContain('does not agree with what was asked for');
+      expect(told).toContain('no gift for …');
+      expect(told).toContain('/receipts/…');
+      expect(gifts.filter((gift) => told.includes(gift.intentId))).toEqual([]);
+      expect(gifts.filter((gift) => told.includes(gift.receiptToken))).toEqual([]);
     },
   );
 

@@ -38,7 +38,9 @@ describe('the sheet', () => {
     const { document } = look(await draw('/give', sheet()));
     const ids = [...document.querySelectorAll('[id]')].map(({ id }) => id);
     expect(new Set(ids).size).toBe(ids.length);
-    for (const input of document.querySelectorAll<HTMLInputElement>('form input, form textarea'))
+    for (const input of document.querySelectorAll<HTMLInputElement>(
+      'form input:not([type=hidden]), form textarea',
+    ))
       expect(input.labels?.length || input.getAttribute('aria-label'), input.name).toBeTruthy();
   });
 
@@ -159,7 +161,7 @@ describe('the check', () => {
     [problem(422, 'refused', { reason: 'part-full' }), '/give?unfinished=1'],
     [problem(409, 'conflict', { reason: 'no-draft' }), '/give?again=1'],
     [problem(502, 'upstream'), '/give/check?trouble=away'],
-    [problem(429, 'too-many'), '/give/check?trouble=many'],
+    [problem(429, 'too-many'), '/give/check?trouble=too-many'],
   ])('a press that cannot be taken leads to the page that says why', async (refused, location) => {
     const page = await draw('/give/check', { ...check, 'POST /api/gifts/checkout': refused }, {});
     expect(page.location).toBe(location);

@@ -77,7 +77,7 @@ export const PAID: GiveOutcome = {
 
 export const RECEIPT: Receipt = {
   number: '000613',
-  givenOn: '2026-12-01',
+  givenOn: '1 December 2026',
   campaignName: 'The Lampwoman',
   name: 'Thea Quillan',
   greeting: 'Mrs Quillan',
@@ -90,7 +90,7 @@ export const RECEIPT: Receipt = {
     wording: 'The words that were declared.',
     name: 'Thea Quillan',
     address: '9 Ropewalk, Brackenhythe, BK4 7HY',
-    givenOn: '2026-12-01',
+    givenOn: '1 December 2026',
     giftAidPence: pence(1500),
   },
   societyName: 'Brackenhythe Heritage Society',

@@ -34,6 +34,7 @@ export const filledSheet = (changes: GiveForm = {}): GiveForm => ({
   name: 'Thea Quillan',
   greeting: 'Mrs Quillan',
   email: 'thea.quillan@post.example',
+  shownWordings: '1.1',
   ...changes,
 });
 
@@ -57,10 +58,14 @@ export async function control(app: TestApp, path: string, body: object = {}): Pr
 export type Asked = { intentId: string; sessionId: string; url: string };
 
 /** As far as the card page. */
-export async function askToGive(app: TestApp, changes: GiveForm = {}): Promise<Asked> {
+export async function askToGive(
+  app: TestApp,
+  changes: GiveForm = {},
+  appealVersion = APPEAL_VERSION,
+): Promise<Asked> {
   const token = makeToken();
   await writeDraft(app.deps, token, filledSheet(changes), false);
-  const { url, intentId } = await beginCheckout(app.deps, { token, appealVersion: APPEAL_VERSION });
+  const { url, intentId } = await beginCheckout(app.deps, { token, appealVersion });
   return { intentId, sessionId: z.string().parse(sessionInUrl.exec(url)?.[1]), url };
 }
 
@@ -68,8 +73,9 @@ export async function askToGive(app: TestApp, changes: GiveForm = {}): Promise<A
 export async function giveGift(
   app: TestApp,
   changes: GiveForm = {},
+  appealVersion = APPEAL_VERSION,
 ): Promise<{ giftId: string; number: number } & Asked> {
-  const asked = await askToGive(app, changes);
+  const asked = await askToGive(app, changes, appealVersion);
   await control(app, `/sessions/${asked.sessionId}/pay`);
   await readOutcome(app.deps, asked.intentId);
   const row: unknown = await app.deps.db('gifts').where({ intent_id: asked.intentId }).first('id', 'number');

@@ -30,7 +30,15 @@ beforeEach(async () => {
     'check_runs',
   ];
   for (const table of tables) await app.deps.db(table).delete();
+  await runEveryCheck(new Date(NOW.getTime() - 1));
 });
+
+/** As the worker does each night; they found nothing. */
+const runEveryCheck = (at: Date) =>
+  app.deps.db.raw(
+    `insert into check_runs (ran_at, name, faults) select ?, viewname, 0 from pg_views where schemaname = 'checks'`,
+    [at],
+  );
 
 const addEvent = (id: string, state: string, receivedAt: Date, fault: string | null = null) =>
   app.deps.db('payment_events').insert({
@@ -45,8 +53,10 @@ const addEvent = (id: string, state: string, receivedAt: Date, fault: string | n
     fault,
   });
 
-const addIntent = async (state: string, createdAt: Date): Promise<string> => {
+/** @returns the id by which the desk may name it; the intent's own when it has no card page. */
+const addIntent = async (state: string, createdAt: Date, expiresAt: Date | null = null): Promise<string> => {
   const id = randomUUID();
+  const sessionId = state === 'started' ? null : `cs_of_${createdAt.getTime()}`;
   await app.deps.db('gift_intents').insert({
     id,
     amount_pence: 2000,
@@ -54,11 +64,12 @@ const addIntent = async (state: string, createdAt: Date): Promise<string> => {
     consent_wording_id: world.consentWordingId,
     answers: '{}',
     state,
-    session_id: `cs_${id}`,
+    session_id: sessionId,
+    session_expires_at: expiresAt,
     created_at: createdAt,
     last_fault: state === 'mismatched' ? 'paid 1900 gbp, asked 2000 gbp' : null,
   });
-  return id;
+  return sessionId ?? id;
 };
 
 describe('words nobody has read', () => {
@@ -155,7 +166,11 @@ describe('letters', () => {
 describe('payments and checks', () => {
   it('hang after an hour, events after ten minutes; what is refused or does not agree at once', async () => {
     const hanging = await addIntent('confirming', ago(2));
-    await addIntent('asked', ago(0.5));
+    await addIntent('asked', ago(5), ago(-1));
+    await addIntent('confirming', ago(0.5));
+    const left = await addIntent('asked', ago(1.5), ago(0.01));
+    const started = await addIntent('started', ago(1.2));
+    await addIntent('started', ago(0.7));
     await addIntent('expired', ago(9));
     const wrong = await addIntent('mismatched', ago(0.1));
     await addEvent('evt_old', 'waiting', ago(0.2));
@@ -165,12 +180,56 @@ describe('payments and checks', () => {
     const rows = await owed('treasurer');
     expect(rows.map((row) => row.id)).toEqual([
       `payment-${hanging}`,
+      `payment-${left}`,
+      expect.stringMatching(/^payment-unnamed-[0-9a-f]{24}$/),
       'event-evt_old',
       `payment-${wrong}`,
       'event-evt_refused',
     ]);
-    expect(rows[2]?.detail.join()).toContain('paid 1900 gbp');
-    expect(rows.every((row) => row.action.kind === 'look')).toBe(true);
+    expect(JSON.stringify(rows)).not.toContain(started);
+    expect(rows[4]?.detail.join()).toContain('paid 1900 gbp');
+    const kinds = ['look', 'look', 'look', 'look'];
+    expect(rows.map((row) => row.action.kind)).toEqual([...kinds, 'settle', 'settle']);
+    expect((await owed('chair')).map((row) => row.action.kind)).toEqual([...kinds, 'look', 'look']);
+  });
+
+  it('end by the treasurer’s word with a reason, once, and by nobody else’s', async () => {
+    const wrong = await addIntent('mismatched', ago(2));
+    const confirming = await addIntent('confirming', ago(3));
+    await addEvent('evt_refused', 'refused', ago(1), 'livemode is not ours');
+    const [treasurer, chair] = [await signIn(app, ['treasurer']), await signIn(app, ['chair'])];
+    const place = `/api/desk/payments/intent/${wrong}/settle`;
+    const body = { reason: 'Given back in the card service' };
+    await chair.post(place, body).expect(403);
+    await treasurer.post(place, { reason: ' ' }).expect(400);
+    await treasurer.post('/api/desk/payments/intent/cs_of_nobody/settle', body).expect(404);
+    await treasurer.post('/api/desk/payments/gift/1/settle', body).expect(404);
+    await treasurer.post(`/api/desk/payments/intent/${confirming}/settle`, body).expect(422);
+    expect((await owed('treasurer')).map((row) => row.id)).toContain(`payment-${wrong}`);
+    await treasurer.post(place, body).expect(200);
+    await treasurer.post(place, body).expect(409);
+    await treasurer.post('/api/desk/payments/event/evt_refused/settle', body).expect(200);
+    expect((await owed('treasurer')).map((row) => row.id)).toEqual([`payment-${confirming}`]);
+    expect(
+      await app.deps.db('gift_intents').where({ session_id: wrong }).first('settled_by', 'settled_reason'),
+    ).toEqual({ settled_by: treasurer.accountId, settled_reason: body.reason });
+    const lines = await app.deps
+      .db('audit.lines')
+      .where({ action: 'payment-looked-at', actor_id: treasurer.accountId })
+      .orderBy('id')
+      .pluck('detail');
+    expect(lines).toEqual([
+      { kind: 'intent', id: wrong },
+      { kind: 'event', id: 'evt_refused' },
+    ]);
+  });
+
+  it('checks that never ran are owed in one row', async () => {
+    await app.deps.db('check_runs').whereIn('name', ['trial_balance', 'shown_total']).delete();
+    const rows = await owed('examiner');
+    expect(rows.map((row) => [row.what, row.detail])).toEqual([
+      ['2 nightly checks have never run', ['shown total', 'trial balance']],
+    ]);
   });
 
   it('a check is owed when its last run found something or lies too far back', async () => {
@@ -180,6 +239,10 @@ describe('payments and checks', () => {
       faults,
       detail: JSON.stringify(Array.from({ length: faults }, () => ({ id: 'x', fault: 'out by 1 pence' }))),
     });
+    await app.deps
+      .db('check_runs')
+      .whereIn('name', ['trial_balance', 'gift_amounts', 'shown_total'])
+      .delete();
     await app.deps
       .db('check_runs')
       .insert([
@@ -201,6 +264,7 @@ describe('payments and checks', () => {
 describe('over the API', () => {
   it('tells the day of the society’s clock, and what was lately done', async () => {
     app.clock.moveTo(new Date('2027-06-10T23:30:00Z'));
+    await runEveryCheck(app.clock.now());
     const gift = await addGift(app.deps.db, world, { words: [{ kind: 'message', words: 'Well done' }] });
     const person = await signIn(app, ['secretary'], 'Joan Pellow');
     await person

@@ -3,7 +3,7 @@ import { readFile } from 'node:fs/promises';
 import type { Server } from 'node:http';
 import { join } from 'node:path';
 import { pathToFileURL } from 'node:url';
-import express, { type RequestHandler } from 'express';
+import express, { Router, type RequestHandler } from 'express';
 import { z } from 'zod';
 
 export type Exchange = (question: {
@@ -33,7 +33,16 @@ export async function openBuiltSite(root = ROOT): Promise<SiteBuild> {
   const built: unknown = await import(pathToFileURL(join(root, 'dist/server/entry-server.js')).href);
   const { render } = moduleSchema.parse({ ...(built as object) });
   return {
-    assets: express.static(client, { index: false, immutable: true, maxAge: '1y' }),
+    // Only what carries a hash in its name: the template beside it is no page and must be kept by nobody.
+    assets: Router().use(
+      '/assets',
+      express.static(join(client, 'assets'), {
+        index: false,
+        redirect: false,
+        immutable: true,
+        maxAge: '1y',
+      }),
+    ),
     open: () => Promise.resolve({ template, render }),
     stop: () => Promise.resolve(),
   };

@@ -9,6 +9,13 @@ const own = (env) => Object.fromEntries(Object.entries(env).filter(([name]) => n
 
 const local = (port) => `http://127.0.0.1:${port}`;
 
+/** Where a browser finds the stand-in's card page: beside the site, so that a phone that reaches one reaches both. */
+export function cardPageOrigin({ publicAddress }, ports) {
+  const host = URL.canParse(publicAddress ?? '') ? new URL(publicAddress).hostname : '';
+  const isLocal = host === '' || /^(localhost|127(\.\d+){3}|\[::1\])$/.test(host);
+  return isLocal ? local(ports.paymentService) : `http://${host}:${ports.paymentService}`;
+}
+
 /** The demonstration never reaches a real service: whatever else was set, its own stand-ins are named. */
 function demonstrationEnvironment({ env, settings, port, secrets, ports }) {
   return {
@@ -17,7 +24,7 @@ function demonstrationEnvironment({ env, settings, port, secrets, ports }) {
     TREENAIL_PAYMENT_KEY: secrets.paymentKey,
     TREENAIL_PAYMENT_WEBHOOK_SECRET: secrets.paymentWebhook,
     TREENAIL_PAYMENT_API: local(ports.paymentService),
-    TREENAIL_PAYMENT_PAGE_ORIGIN: local(ports.paymentService),
+    TREENAIL_PAYMENT_PAGE_ORIGIN: cardPageOrigin(settings, ports),
     TREENAIL_PAYMENT_CONTROLS: local(ports.paymentControls),
     TREENAIL_SMTP_URL: `smtp://127.0.0.1:${ports.smtp}`,
   };
@@ -47,6 +54,7 @@ export function standInEnvironments({ env, settings, port, secrets, ports }) {
       ...common,
       PAYMENT_SERVICE_PORT: String(ports.paymentService),
       PAYMENT_SERVICE_CONTROL_PORT: String(ports.paymentControls),
+      PAYMENT_SERVICE_PUBLIC: cardPageOrigin(settings, ports),
       PAYMENT_SERVICE_STATE: `${settings.data}/payment-service`,
       PAYMENT_SERVICE_KEY: secrets.paymentKey,
       PAYMENT_SERVICE_WEBHOOK_URL: `${local(port)}/webhooks/payments`,

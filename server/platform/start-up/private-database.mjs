@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import { databaseAccount, findBinaries, prepareFolder } from './cluster-folder.mjs';
 import { APP, OWNER, databaseUrl, prepareSql, runSql } from './database.mjs';
 import { StartFault } from './faults.mjs';
+import { beginAgain, isHalfFilled } from './half-filled.mjs';
 import { installDebian } from './install.mjs';
 import { clearPidFile, makeCluster, serverSpec, untilReady } from './postgres.mjs';
 
@@ -43,10 +44,13 @@ export async function startPrivateDatabase({ data, port, secrets, crew, say, env
   const isNew = await makeCluster({ bin, folder, account, password, run: crew.runToEnd, marker });
   crew.keep(serverSpec({ bin, folder, account, port }));
   await crew.whileAllLive(untilReady({ bin, port }));
-  const passwords = { ownerPassword: secrets.databaseOwner, appPassword: secrets.databaseApp };
-  await runSql({ bin, port, password }, prepareSql({ name: NAME, ...passwords }));
+  const connection = { bin, port, password };
+  const roles = { name: NAME, ownerPassword: secrets.databaseOwner, appPassword: secrets.databaseApp };
+  await runSql(connection, prepareSql(roles));
   return {
     isNew,
+    isHalfFilled: () => isHalfFilled(connection, NAME),
+    beginAgain: () => beginAgain(connection, roles),
     url: databaseUrl({ role: APP, password: secrets.databaseApp, port, name: NAME }),
     ownerUrl: databaseUrl({ role: OWNER, password: secrets.databaseOwner, port, name: NAME }),
   };

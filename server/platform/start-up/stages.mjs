@@ -1,5 +1,5 @@
 // The stages of a start after the data folder is locked, in the order in which they need one another.
-import { mkdirSync } from 'node:fs';
+import { mkdirSync, rmSync } from 'node:fs';
 import { join, relative } from 'node:path';
 import { setTimeout as pause } from 'node:timers/promises';
 import { buildIfStale } from './build.mjs';
@@ -12,6 +12,7 @@ import { refuseLostPassword, startPrivateDatabase } from './private-database.mjs
 import { keepSecrets } from './secrets.mjs';
 
 const STAND_IN_PORTS = ['paymentService', 'paymentControls', 'mailPage', 'oneTimeCodes', 'smtp'];
+const STAND_IN_STATES = ['payment-service', 'mail'];
 const HEALTH_WAIT_MS = 90_000;
 const STAND_IN_WAIT_MS = 30_000;
 
@@ -83,11 +84,22 @@ export async function bringUpDatabase({ settings, crew, kept, env, say }) {
   return { ...made, words: `${made.isNew ? 'made, ' : ''}running on port ${port}` };
 }
 
-export async function migrate({ settings, crew, childEnv, database }) {
+async function runMigrations({ settings, crew, childEnv, database }) {
   const env = { ...childEnv, DATABASE_OWNER_URL: database.ownerUrl };
   const refusal = 'The database could not be brought up to date.';
   await crew.runToEnd(program(settings, 'migrate', 'server/migrate.ts', env, { refusal }));
-  return 'up to date';
+}
+
+/** Half a demonstration is begun again here, before the stand-ins run; a database of the society's own is left alone. */
+export async function migrate(all) {
+  const { settings, database } = all;
+  await runMigrations(all);
+  if (!settings.isDemonstration || !(await database.isHalfFilled?.())) return 'up to date';
+  // The stand-ins' state first: once the database is gone, nothing tells any more that they hold half a town.
+  for (const state of STAND_IN_STATES) rmSync(join(settings.data, state), { recursive: true, force: true });
+  await database.beginAgain();
+  await runMigrations(all);
+  return 'made anew, because the demonstration had been only half filled';
 }
 
 export const build = ({ settings, crew, env, say }) =>
@@ -96,7 +108,7 @@ export const build = ({ settings, crew, env, say }) =>
     : buildIfStale(settings.project, { run: crew.runToEnd, say, env: toolEnvironment(env) });
 
 export async function startStandIns({ settings, crew, kept, env, port }) {
-  for (const state of ['payment-service', 'mail']) {
+  for (const state of STAND_IN_STATES) {
     mkdirSync(join(settings.data, state), { recursive: true, mode: 0o700 });
   }
   const environments = standInEnvironments({ env, settings, port, ...kept });

@@ -60,7 +60,11 @@ function Text({ name, mail }: { name: string; mail: GiftMail }) {
   return (
     <details className="letter">
       <summary>Read exactly what {mail.sentAt === null ? 'is to be sent' : 'was sent'}</summary>
-      <p className="small ash">Subject: {mail.subject}</p>
+      <p className="small ash">
+        Subject: {mail.subject}
+        <br />
+        The key in the receipt’s address is the giver’s alone, so … stands for it here.
+      </p>
       <pre tabIndex={0} role="region" aria-label={`${name}, its text`}>
         {mail.plain}
       </pre>

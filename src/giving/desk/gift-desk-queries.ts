@@ -6,7 +6,9 @@ import {
   giftListSchema,
   type GiftFilter,
   type JudgeWords,
+  type PaymentKind,
   type SettleMail,
+  type SettlePayment,
 } from '#shared/giving/desk-schemas.ts';
 import type { Api } from '#src/lib/api.ts';
 import { useApi } from '#src/lib/use-api.ts';
@@ -54,6 +56,20 @@ export function useSettleLetter() {
   return useMutation({
     mutationFn: ({ mailId, decision }: SettleMail & { mailId: string }) =>
       api.send(doneSchema, `/api/desk/mail/${mailId}/settle`, { body: { decision } }),
+    onSettled: () => queryClient.invalidateQueries({ queryKey: GIVING }),
+  });
+}
+
+type PaymentLookedAt = SettlePayment & { paymentKind: PaymentKind; paymentId: string };
+
+export function useSettlePayment() {
+  const api = useApi();
+  const queryClient = useQueryClient();
+  return useMutation({
+    mutationFn: ({ paymentKind, paymentId, reason }: PaymentLookedAt) =>
+      api.send(doneSchema, `/api/desk/payments/${paymentKind}/${encodeURIComponent(paymentId)}/settle`, {
+        body: { reason },
+      }),
     onSettled: () => queryClient.invalidateQueries({ queryKey: GIVING }),
   });
 }
