@@ -47,6 +47,7 @@ export function share(total: Pence, weights: readonly number[]): Pence[] {
 
 /** `per` for each `of`, to the nearest penny, half a penny up: 25 per 100 of £20 is £5. */
 export function applyRate(sum: Pence, rate: { per: number; of: number }): Pence {
+  if (sum < 0) throw new RangeError('a rate is applied to a sum, not to a debt');
   const twice = 2n * BigInt(sum) * BigInt(rate.per) + BigInt(rate.of);
   return pence(Number(twice / (2n * BigInt(rate.of))));
 }

@@ -3,7 +3,7 @@ import { z } from 'zod';
 import type { Stage } from '#shared/campaign/campaign-schemas.ts';
 import { appealWordingSchema, STAGE_MARKS, type AppealWording } from '#shared/campaign/campaign-schemas.ts';
 import type { Pence } from '#shared/money.ts';
-import { toPence, type Db } from '#server/platform/db.ts';
+import { toPence, type Db, type Trx } from '#server/platform/db.ts';
 import { NotFound } from '#server/platform/errors.ts';
 
 const penceColumn = z.unknown().transform(toPence);
@@ -50,6 +50,11 @@ export async function getCampaign(db: Db): Promise<CampaignRecord> {
     fundId: row.fund_id,
     publishedAt: row.published_at,
   };
+}
+
+/** Whoever shares money out among the parts waits here for whoever is doing so. */
+export async function lockCampaign(trx: Trx): Promise<void> {
+  await trx('campaigns').whereNotNull('published_at').forUpdate().select('id');
 }
 
 export type WorkState = 'waiting' | 'making' | 'placed';

@@ -16,6 +16,7 @@ export {
   getDrawing,
   listParts,
   listStages,
+  lockCampaign,
   type CampaignRecord,
   type PartRecord,
 } from './campaign-store.ts';

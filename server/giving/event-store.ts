@@ -1,6 +1,6 @@
 // The only file that names the inbox of what the payment service told us.
 import { z } from 'zod';
-import { queryRows, type Db, type Trx } from '#server/platform/db.ts';
+import { queryRows, type Trx } from '#server/platform/db.ts';
 
 /** `paymentId` is the payment that the event's object names, and never changes once it does. */
 export type InboxEvent = {
@@ -89,12 +89,4 @@ export async function putOffEvent(trx: Trx, event: InboxEvent, fault: string): P
   await trx('payment_events')
     .where({ id: event.id })
     .update({ fault, lease_until: trx.raw(`now() + make_interval(secs => ?)`, [seconds]) });
-}
-
-export async function countWaiting(db: Db): Promise<number> {
-  const row = await db('payment_events')
-    .where({ state: 'waiting' })
-    .count<{ count: string }[]>({ count: '*' })
-    .first();
-  return Number(row?.count ?? 0);
 }

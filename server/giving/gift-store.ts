@@ -98,6 +98,17 @@ export async function findGiftIdByReceipt(db: Db, receiptToken: string): Promise
   return row?.id;
 }
 
+const keysRow = z.object({ intent_id: z.string(), receipt_token: z.string(), number: z.number() });
+export type GiftKeys = { intentId: string; receiptToken: string; number: number };
+
+/** What leads from a gift to its intent, its receipt and its place in the ledger. */
+export async function getGiftKeys(db: Db, giftId: string): Promise<GiftKeys> {
+  const row = keysRow.parse(
+    await db('gifts').where({ id: giftId }).first('intent_id', 'receipt_token', 'number'),
+  );
+  return { intentId: row.intent_id, receiptToken: row.receipt_token, number: row.number };
+}
+
 const feeRow = z.object({
   id: z.string(),
   payment_intent_id: z.string(),

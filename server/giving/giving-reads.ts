@@ -22,7 +22,7 @@ import { reportError } from '#server/platform/problems.ts';
 import { getGivingSettings } from '#server/society/index.ts';
 import { judgeAnswers, readRules, shownWordings } from './draft-service.ts';
 import { findDraft } from './draft-store.ts';
-import { findGiftIdOfIntent } from './gift-store.ts';
+import { findGiftIdOfIntent, getGiftKeys } from './gift-store.ts';
 import { findIntent, findLikeGiftSince, listOpenIntentsOf, type GiftIntent } from './intent-store.ts';
 import { readReceipt, receiptNumber } from './receipt-reads.ts';
 import { fetchSession, settleSession } from './settle-session.ts';
@@ -173,12 +173,7 @@ export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOut
   const campaign = await getCampaign(deps.db);
   const giftId = await findGiftIdOfIntent(deps.db, intent.id);
   const receipt = giftId ? await readReceipt(deps.db, giftId) : null;
-  const gift = giftId
-    ? await deps
-        .db('gifts')
-        .where({ id: giftId })
-        .first<{ receipt_token: string; number: number }>('receipt_token', 'number')
-    : undefined;
+  const gift = giftId ? await getGiftKeys(deps.db, giftId) : undefined;
   return giveOutcomeSchema.parse({
     outcome: receipt ? 'paid' : isSure ? OUTCOME_OF[intent.state] : 'confirming',
     campaignName: campaign.name,
@@ -189,7 +184,7 @@ export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOut
     splitNote: receipt?.splitNote ?? null,
     email: receipt ? intent.answers.email : null,
     receiptNumber: gift ? receiptNumber(gift.number) : null,
-    receiptPath: gift ? `/receipts/${gift.receipt_token}` : null,
+    receiptPath: gift ? `/receipts/${gift.receiptToken}` : null,
     inMemory: intent.answers.dedication === 'memory',
   });
 }

@@ -4,7 +4,7 @@ import { splitGift } from '#shared/giving/split-rules.ts';
 import { giveFormSchema, type GiveFormFilled } from '#shared/giving/give-schemas.ts';
 import { recordAudit } from '#server/accounts/index.ts';
 import { postGiftReceived } from '#server/books/index.ts';
-import { getAppealWordingById } from '#server/campaign/index.ts';
+import { getAppealWordingById, lockCampaign } from '#server/campaign/index.ts';
 import { keepDeclaration } from '#server/declarations/index.ts';
 import type { Deps } from '#server/deps.ts';
 import type { Trx } from '#server/platform/db.ts';
@@ -30,7 +30,7 @@ export type Received = { kind: 'received'; giftId: string; isNew: boolean } | { 
 
 /** The shares of a gift, reckoned under the campaign's lock so that two gifts cannot both fill one part. */
 async function shareOut(trx: Trx, intent: GiftIntent): Promise<{ fundId: string; shares: GiftShare[] }> {
-  await trx('campaigns').whereNotNull('published_at').forUpdate().select('id');
+  await lockCampaign(trx);
   const standing = await readStanding(trx);
   const wording = await getAppealWordingById(trx, intent.appealWordingId);
   const part = standing.parts.find((one) => one.id === intent.partId);

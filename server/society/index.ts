@@ -5,7 +5,6 @@ export {
   addWording,
   getSociety,
   getWording,
-  getWordingById,
   isGiftAidOffered,
   setSetting,
   writeSociety,

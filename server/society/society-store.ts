@@ -66,12 +66,6 @@ export async function getWording(db: Db, kind: WordingKind, at: Date): Promise<W
   return wordingSchema.parse(row);
 }
 
-export async function getWordingById(db: Db, id: string): Promise<Wording> {
-  const row: unknown = await db('wordings').where({ id }).first();
-  if (row === undefined) throw new NotFound('This wording is not kept here.');
-  return wordingSchema.parse(row);
-}
-
 export async function addWording(
   trx: Trx,
   kind: WordingKind,

@@ -93,8 +93,8 @@ async function benchGift(app: TestApp): Promise<void> {
       sessionId,
       paymentIntentId: `pi_bench_${number}`,
       chargeId: `ch_bench_${number}`,
-      amountPence: pence(2_000),
-      currency: 'gbp',
+      amountsPence: [pence(2_000)],
+      currencies: ['gbp'],
       paidAt: new Date(),
     };
     // In turn, so that a slow moment of the disk falls on both.

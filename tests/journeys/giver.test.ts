@@ -3,6 +3,7 @@ import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import {
   expectAccessible,
+  expectAccessibleBoth,
   expectAccessibleNarrow,
   openStage,
   PHONE,
@@ -58,18 +59,18 @@ describe('with a phone', () => {
     await page.getByRole('button', { name: 'Check before you pay' }).click();
     await page.waitForURL('**/give/check');
     await page.getByText('£25').first().waitFor();
-    await expectAccessible(page);
+    await expectAccessibleBoth(page);
     await page.getByRole('button', { name: 'Pay £20' }).click();
     await page.waitForURL('**/pay/**');
-    await expectAccessible(page);
+    await expectAccessibleBoth(page);
     await payWith(page, /Pays at once/);
     await page.waitForURL('**/give/done**');
     await page.getByText(/has come safely/).waitFor();
-    await expectAccessible(page);
+    await expectAccessibleBoth(page);
     await page.getByRole('link', { name: /Receipt 0/ }).click();
     await page.waitForURL('**/receipts/**');
     await page.getByText('Walter Quillan').first().waitFor();
-    await expectAccessible(page);
+    await expectAccessibleBoth(page);
     await expect.poll(() => lettersTo('thea.quillan@post.example'), { timeout: 20_000 }).toHaveLength(1);
     expect(complaints).toEqual([]);
     await expectBooksToAgree(stage.app.deps.db);
@@ -79,6 +80,17 @@ describe('with a phone', () => {
     const { page } = await stage.visitor(PHONE);
     await toCardPage(page, 'refused.once@post.example');
     await payWith(page, /too little money/);
+    await page.getByText(/there is too little money in the account/).waitFor();
+    await expectAccessibleBoth(page);
+    // Looking at the site meanwhile: it tells the truth, and leads back.
+    const { rows } = await stage.app.deps.db.raw<{ rows: { id: string }[] }>(
+      `select id from gift_intents order by created_at desc limit 1`,
+    );
+    const other = await page.context().newPage();
+    await other.goto(`/give/done?gift=${rows[0]?.id}`);
+    await other.getByText(/Nothing was taken/).waitFor();
+    await expectAccessibleBoth(other);
+    await other.close();
     await page.getByText(/there is too little money in the account/).waitFor();
     await payWith(page, /Pays at once/);
     await page.getByText(/has come safely/).waitFor();
@@ -101,7 +113,7 @@ describe('with a phone', () => {
     await toCardPage(page, 'slow@post.example');
     await payWith(page, /confirmed some seconds later/);
     await page.getByText(/What happens next/).waitFor();
-    await expectAccessible(page);
+    await expectAccessibleBoth(page);
     await control(stage.app, '/async/confirm');
     await page.getByText(/has come safely/).waitFor({ timeout: 20_000 });
   });

@@ -50,6 +50,7 @@ test('from the door to the last line of the books', async () => {
   await page.getByRole('button', { name: 'Open the desk' }).click();
   await page.waitForURL('**/desk/second-factor**');
   await expectAccessible(page);
+  await expectAccessibleNarrow(page);
   await page.getByLabel('One-time code').fill(await generate({ secret: edwin.totpSecret ?? '' }));
   await page.getByRole('button', { name: 'Go on' }).click();
   await page.waitForURL('**/desk/gifts');
@@ -74,6 +75,7 @@ test('from the door to the last line of the books', async () => {
   await expectAccessibleNarrow(page);
   await page.goto('/desk/account', { waitUntil: 'networkidle' });
   await expectAccessible(page);
+  await expectAccessibleNarrow(page);
   await page.getByRole('button', { name: /leave the desk/i }).click();
   await page.waitForURL((address) => !address.pathname.startsWith('/desk/account'));
   expect((await page.request.get('/api/desk/gifts')).status()).toBe(401);

@@ -126,8 +126,10 @@ describe('problems', () => {
 
   test('a fault of ours tells nothing of what went wrong inside', async () => {
     const broken = await startTestApp();
-    const answer = await broken.agent().get('/api/campaign').expect(404);
-    expect(JSON.stringify(answer.body)).not.toMatch(/at |stack|select/i);
+    await broken.database.owner.raw('alter table campaigns rename to gone');
+    const answer = await broken.agent().get('/api/campaign').expect(500);
+    expect(problemSchema.parse(answer.body)).toMatchObject({ code: 'internal', status: 500 });
+    expect(JSON.stringify(answer.body)).not.toMatch(/campaigns|select|stack|\.ts/);
     await broken.stop();
   });
 });

@@ -97,6 +97,15 @@ export async function expectAccessible(page: Page): Promise<void> {
   expect(overflow, `${page.url()} scrolls sideways`).toBeLessThanOrEqual(0);
 }
 
+/** At 1280 px in light and at 320 px in dark, then as it was before. */
+export async function expectAccessibleBoth(page: Page): Promise<void> {
+  const before = page.viewportSize();
+  await page.setViewportSize({ width: 1280, height: 900 });
+  await expectAccessible(page);
+  if (before) await page.setViewportSize(before);
+  await expectAccessibleNarrow(page);
+}
+
 /** The same page as somebody with a narrow, dark window sees it. */
 export async function expectAccessibleNarrow(page: Page): Promise<void> {
   const before = page.viewportSize();
