@@ -20,6 +20,7 @@ import type { Deps } from '#server/deps.ts';
 import { Conflict, NotFound } from '#server/platform/errors.ts';
 import { reportError } from '#server/platform/problems.ts';
 import { getGivingSettings } from '#server/society/index.ts';
+import { settleAnswers } from './answers.ts';
 import { judgeAnswers, readRules, shownWordings } from './draft-service.ts';
 import { findDraft } from './draft-store.ts';
 import { findGiftIdOfIntent, getGiftKeys } from './gift-store.ts';
@@ -129,7 +130,7 @@ export async function readCheck(deps: Deps, token: string | undefined): Promise<
     isDeclared,
     giftAidOffered: rules.isGiftAidOffered,
     towards: towardsOf(rules.standing, verdict.answers),
-    answers: verdict.answers,
+    answers: settleAnswers(verdict.answers),
     saidBack: await saidBack(deps, draft.id, sum.pence),
     appealVersion: wording.version,
     onShortfall: wording.onShortfall,
@@ -166,11 +167,17 @@ const OUTCOME_OF: Record<GiftIntent['state'], GiveOutcome['outcome']> = {
   failed: 'not-paid',
 };
 
-export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOutcome> {
+/**
+ * How it came out. The address of the page may be passed on, so the giver's own address and the receipt are
+ * told to the browser that gave and to nobody else.
+ */
+export async function readOutcome(deps: Deps, intentId: string, token?: string): Promise<GiveOutcome> {
   const found = await findIntent(deps.db, intentId);
   if (!found) throw new NotFound('We know of no gift at this address.');
   const { intent, isSure } = await bringUpToDate(deps, found);
   const campaign = await getCampaign(deps.db);
+  const draft = await findDraft(deps.db, token);
+  const isGiver = draft !== undefined && draft.id === intent.draftId;
   const giftId = await findGiftIdOfIntent(deps.db, intent.id);
   const receipt = giftId ? await readReceipt(deps.db, giftId) : null;
   const gift = giftId ? await getGiftKeys(deps.db, giftId) : undefined;
@@ -182,9 +189,9 @@ export async function readOutcome(deps: Deps, intentId: string): Promise<GiveOut
     giftAidPence: receipt?.declaration?.giftAidPence ?? NOTHING,
     shares: receipt?.shares ?? [],
     splitNote: receipt?.splitNote ?? null,
-    email: receipt ? intent.answers.email : null,
-    receiptNumber: gift ? receiptNumber(gift.number) : null,
-    receiptPath: gift ? `/receipts/${gift.receiptToken}` : null,
-    inMemory: intent.answers.dedication === 'memory',
+    email: receipt && isGiver ? intent.answers.email : null,
+    receiptNumber: gift && isGiver ? receiptNumber(gift.number) : null,
+    receiptPath: gift && isGiver ? `/receipts/${gift.receiptToken}` : null,
+    inMemory: isGiver && intent.answers.dedication === 'memory',
   });
 }

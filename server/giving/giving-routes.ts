@@ -81,7 +81,7 @@ export function createGiftsRouter(deps: Deps): Router {
   router.get('/:intentId/outcome', async (req, res) => {
     const intentId = z.uuid().safeParse(req.params.intentId);
     if (!intentId.success) throw new NotFound('We know of no gift at this address.');
-    res.json(await readOutcome(deps, intentId.data));
+    res.json(await readOutcome(deps, intentId.data, readDraftToken(deps, req)));
   });
   return router;
 }

@@ -4,8 +4,8 @@ import { SETTING_KEYS, setSetting } from '#server/society/index.ts';
 import { startTestApp, type TestApp } from '#tests/support/app.ts';
 import {
   APPEAL_VERSION,
+  control,
   filledSheet,
-  giveGift,
   setUpTown,
   withDeclaration,
 } from '#tests/support/factories.ts';
@@ -145,14 +145,24 @@ describe('checkout', () => {
 });
 
 describe('after the gift', () => {
-  test('the sheet is blank again, the gift is said back when given again, the receipt is a page and a file', async () => {
-    const { giftId, intentId } = await giveGift(app, {
-      ...withDeclaration,
-      name: 'Zoë Łukasik',
-      dedication: 'memory',
-      dedicationName: 'Walter Quillan',
-    });
-    const outcome = await app.agent().get(`/api/gifts/${intentId}/outcome`).expect(200);
+  test('the sheet is blank again, and the receipt is a page and a file for the giver alone', async () => {
+    const agent = app.agent();
+    const words = { dedication: 'memory', dedicationName: 'Walter Quillan' } as const;
+    await agent
+      .put('/api/gifts/draft')
+      .send(filledSheet({ ...withDeclaration, ...words, name: 'Zoë Łukasik' }))
+      .expect(200);
+    const { body: page } = await agent
+      .post('/api/gifts/checkout')
+      .send({ appealVersion: APPEAL_VERSION })
+      .expect(200);
+    const sessionId = /(cs_[A-Za-z0-9_]+)/.exec(String(page.url))?.[1] ?? '';
+    await control(app, `/sessions/${sessionId}/pay`);
+    const { id } = await app.deps
+      .db('gift_intents')
+      .where({ session_id: sessionId })
+      .first<{ id: string }>('id');
+    const outcome = await agent.get(`/api/gifts/${id}/outcome`).expect(200);
     expect(outcome.body).toMatchObject({
       outcome: 'paid',
       sumPence: 2_000,
@@ -160,29 +170,38 @@ describe('after the gift', () => {
       inMemory: true,
     });
     const token = String(outcome.body.receiptPath).split('/').at(-1);
-    const receipt = await app
-      .agent()
-      .get(`/api/receipts/${token}`)
-      .expect(200)
-      .expect('Cache-Control', 'no-store');
+    const receipt = await agent.get(`/api/receipts/${token}`).expect(200).expect('Cache-Control', 'no-store');
     expect(receipt.body).toMatchObject({
       name: 'Zoë Łukasik',
       dedication: { kind: 'memory', name: 'Walter Quillan' },
     });
     expect(receipt.body.declaration.wording).toContain('I must pay the difference myself');
-    const file = await app
-      .agent()
+    const file = await agent
       .get(`/receipts/${token}.pdf`)
       .expect(200)
       .expect('Content-Type', 'application/pdf');
     expect(file.body.subarray(0, 5).toString()).toBe('%PDF-');
-    const drafts = await app.deps
-      .db('give_drafts')
-      .join('gift_intents', 'gift_intents.draft_id', 'give_drafts.id')
-      .join('gifts', 'gifts.intent_id', 'gift_intents.id')
-      .where('gifts.id', giftId)
-      .first('give_drafts.answers');
-    expect(drafts).toEqual({ answers: {} });
+    expect((await agent.get('/api/gifts/sheet').expect(200)).body.answers.name ?? '').toBe('');
+    const stranger = await app.agent().get(`/api/gifts/${id}/outcome`).expect(200);
+    expect(stranger.body).toMatchObject({ outcome: 'paid', email: null, receiptPath: null, inMemory: false });
+  });
+
+  test('given again from the same browser within the hour, it is said back', async () => {
+    const agent = app.agent();
+    await agent.put('/api/gifts/draft').send(filledSheet()).expect(200);
+    const { body } = await agent
+      .post('/api/gifts/checkout')
+      .send({ appealVersion: APPEAL_VERSION })
+      .expect(200);
+    await control(app, `/sessions/${/(cs_[A-Za-z0-9_]+)/.exec(String(body.url))?.[1]}/pay`);
+    const { id } = await app.deps
+      .db('gift_intents')
+      .orderBy('created_at', 'desc')
+      .first<{ id: string }>('id');
+    await agent.get(`/api/gifts/${id}/outcome`).expect(200);
+    await agent.put('/api/gifts/draft').send(filledSheet()).expect(200);
+    const check = await agent.get('/api/gifts/check').expect(200);
+    expect(check.body.saidBack[0]).toContain('makes a second gift');
   });
 
   test.each([
