@@ -6,7 +6,6 @@ import { addDays, dayOf, type Day } from '#shared/dates.ts';
 import { GIVE_FIELDS, type GiveForm } from '#shared/giving/give-schemas.ts';
 import type { Role } from '#shared/roles.ts';
 import { keepCheckRun, runChecks } from '#server/books/index.ts';
-import { finishStage, markPart, moveStage } from '#server/campaign/index.ts';
 import type { Deps } from '#server/deps.ts';
 import { createWebhookRouter, givingTasks, judgeWords, readStanding } from '#server/giving/index.ts';
 import type { movableClock } from '#server/platform/clock.ts';
@@ -14,6 +13,7 @@ import { sendDueMail } from '#server/platform/mail/index.ts';
 import { seedBrackenhythe, SOCIETY_NAME, type Brackenhythe } from './brackenhythe.ts';
 import { GIFTS, inventGiver, inventWords, planGifts, type Giver, type PlannedGift } from './gift-plan.ts';
 import { giveGift, openControls, type Controls } from './give.ts';
+import { happenings } from './happenings.ts';
 import { createChance, type Chance } from './random.ts';
 
 export const CAMPAIGN_DAYS = 425;
@@ -85,48 +85,6 @@ async function readWords({ deps, town }: Run, leave: number): Promise<void> {
         requestId: undefined,
       }),
     );
-}
-
-type Happening = { day: Day; happen: (run: Run) => Promise<void> };
-
-/** What the site lead says of parts and stages, each on its day. */
-function happenings(lastDay: Day): Happening[] {
-  const on = (days: number, happen: Happening['happen']): Happening => ({
-    day: addDays(lastDay, days),
-    happen,
-  });
-  const deed = (run: Run) => ({
-    actor: { kind: 'desk' as const, accountId: run.town.people.get('osric.wray@brackenhythe.example') ?? '' },
-    at: run.deps.clock.now(),
-  });
-  const mark =
-    (workState: 'making' | 'placed', ...slugs: string[]) =>
-    async (run: Run) => {
-      const { campaignId } = run.town;
-      for (const slug of slugs)
-        await run.deps.db.transaction((trx) => markPart(trx, { campaignId, slug, workState }, deed(run)));
-    };
-  const finish = (slug: string) => async (run: Run) => {
-    const done = { campaignId: run.town.campaignId, slug, day: dayOf(run.deps.clock.now()) };
-    await run.deps.db.transaction((trx) => finishStage(trx, done, deed(run)));
-  };
-  return [
-    on(-240, mark('making', 'footing')),
-    on(-205, mark('placed', 'footing')),
-    on(-204, finish('footing')),
-    on(-160, mark('making', 'boots-and-hem', 'skirt-lower')),
-    on(-110, mark('placed', 'boots-and-hem')),
-    on(-75, mark('placed', 'skirt-lower')),
-    on(-74, mark('making', 'skirt-upper')),
-    on(-52, mark('placed', 'skirt-upper')),
-    on(-51, finish('skirt')),
-    on(-45, mark('making', 'body', 'belt-and-rope')),
-    on(-12, async (run) => {
-      const reason = 'Two of the oak butts split as they dried; new ones are being cut.';
-      const move = { campaignId: run.town.campaignId, slug: 'body', toDay: addDays(lastDay, 86), reason };
-      await run.deps.db.transaction((trx) => moveStage(trx, move, deed(run)));
-    }),
-  ];
 }
 
 async function towardsOf({ deps, chance }: Run, planned: PlannedGift): Promise<string> {

@@ -119,7 +119,8 @@ async function startIntent(
   return deps.db.transaction(async (trx) => {
     const draft = await lockDraft(trx, token);
     if (!draft) throw new Conflict('There is nothing to pay yet. Fill in the sheet first.', 'no-draft');
-    const { campaignName, ...wanted } = await readWanted(deps, draft, appealVersion);
+    const isSame = JSON.stringify(draft.answers) === JSON.stringify(found.answers);
+    const { campaignName, ...wanted } = isSame ? seen : await readWanted(deps, draft, appealVersion);
     const again = (await listOpenIntentsOf(trx, draft.id)).find((one) => isForThis(one, wanted));
     return { intent: again ?? (await addIntent(trx, wanted)), campaignName };
   });

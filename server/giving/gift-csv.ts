@@ -1,12 +1,13 @@
 // The gifts' list as CSV for a spreadsheet: the same filter, every gift of it, and no cell that a sheet would run.
 import { stringify } from 'csv-stringify';
-import { formatTime } from '#shared/dates.ts';
+import { z } from 'zod';
+import { TIME_ZONE } from '#shared/dates.ts';
 import type { GiftFilter, GiftRow } from '#shared/giving/desk-schemas.ts';
 import { DEDICATION_WORDS, THANKS_WORDS } from '#shared/giving/desk-words.ts';
 import { formatPlain } from '#shared/money.ts';
-import type { Db } from '#server/platform/db.ts';
+import { queryRows, type Db } from '#server/platform/db.ts';
 import { listGiftRows } from './gift-list-reads.ts';
-import type { Reader } from './withheld-names.ts';
+import { WITHHELD_SQL, type Reader } from './withheld-names.ts';
 
 const ROWS_AT_ONCE = 500;
 
@@ -15,6 +16,7 @@ const COLUMNS = [
   { key: 'day', header: 'Day' },
   { key: 'time', header: 'Time' },
   { key: 'giver', header: 'From whom' },
+  { key: 'nameShown', header: 'Name shown' },
   { key: 'how', header: 'How' },
   { key: 'towards', header: 'For' },
   { key: 'dedication', header: 'Dedication' },
@@ -24,11 +26,42 @@ const COLUMNS = [
   { key: 'unreadWords', header: 'Words to read' },
 ];
 
-const toCells = (row: GiftRow): Record<string, string> => ({
+const NAME_SHOWN = {
+  wall: 'on the wall',
+  'not-public': 'not public',
+  'treasurer-only': 'treasurer only',
+} as const;
+const nameShownSchema = z.object({
+  number: z.int(),
+  name_shown: z.enum(['wall', 'not-public', 'treasurer-only']),
+});
+
+/** Where each giver let the name be shown, so that a hidden name carries its mark into every sheet. */
+async function listNamesShown(db: Db, numbers: readonly number[]): Promise<Map<number, string>> {
+  const rows = await queryRows(
+    db,
+    nameShownSchema,
+    `select g.number, case when ${WITHHELD_SQL} then 'treasurer-only' else g.name_shown end as name_shown
+     from gifts g join supporters s on s.id = g.supporter_id where g.number = any(?)`,
+    [numbers],
+  );
+  return new Map(rows.map((row) => [row.number, NAME_SHOWN[row.name_shown]]));
+}
+
+/** 09:30: as a spreadsheet sorts it, unlike the times that people read on the desk. */
+const sheetTime = new Intl.DateTimeFormat('en-GB', {
+  timeZone: TIME_ZONE,
+  hour: '2-digit',
+  minute: '2-digit',
+  hourCycle: 'h23',
+});
+
+const toCells = (row: GiftRow, nameShown: string): Record<string, string> => ({
   number: String(row.number),
   day: row.day,
-  time: formatTime(new Date(row.receivedAt)),
+  time: sheetTime.format(new Date(row.receivedAt)),
   giver: row.giver,
+  nameShown,
   how: row.how,
   towards: row.towards,
   dedication: row.dedication === null ? '' : DEDICATION_WORDS[row.dedication],
@@ -47,7 +80,11 @@ export async function* readGiftCells(
   let after = '';
   for (;;) {
     const rows = await listGiftRows(db, { ...filter, after }, reader, ROWS_AT_ONCE);
-    for (const row of rows) yield toCells(row);
+    const shown = await listNamesShown(
+      db,
+      rows.map((row) => row.number),
+    );
+    for (const row of rows) yield toCells(row, shown.get(row.number) ?? NAME_SHOWN['treasurer-only']);
     if (rows.length < ROWS_AT_ONCE) return;
     after = String(rows.at(-1)?.number ?? '');
   }

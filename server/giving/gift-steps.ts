@@ -1,7 +1,7 @@
 // Tells what happened to one gift, step by step in words, oldest first. Pure: it is given only what may be seen.
 import { formatDay } from '#shared/dates.ts';
 import type { GiftChain, GiftMail, GiftStep, GiftWords } from '#shared/giving/desk-schemas.ts';
-import { WORDS_KIND_WORDS } from '#shared/giving/desk-words.ts';
+import { WORDS_KIND_NOUNS } from '#shared/giving/desk-words.ts';
 import { formatPence } from '#shared/money.ts';
 import type { PaymentEvent } from './gift-payment-reads.ts';
 
@@ -88,11 +88,12 @@ const bookSteps = (gift: Told): GiftStep[] =>
   }));
 
 function wordsSteps(words: GiftWords): GiftStep[] {
-  const what = WORDS_KIND_WORDS[words.kind];
+  const isWall = words.kind === 'wall-name';
+  const what = WORDS_KIND_NOUNS[words.kind];
   const written: GiftStep = {
     at: words.writtenAt,
     kind: 'words',
-    words: `The giver wrote words: ${what}.`,
+    words: `The giver wrote ${isWall ? what : `a ${what}`}.`,
     detail: words.hasContact
       ? [
           `The family is to be told once the words are passed, ${words.mayTellSum ? 'with' : 'without'} the sum`,
@@ -101,13 +102,14 @@ function wordsSteps(words: GiftWords): GiftStep[] {
     isFault: false,
   };
   if (words.readAt === null) return [written];
-  const verdict = words.verdict === 'passed' ? 'passed them' : 'held them back';
+  const it = isWall ? 'them' : 'it';
+  const verdict = words.verdict === 'passed' ? `passed ${it}` : `held ${it} back`;
   return [
     written,
     {
       at: words.readAt,
       kind: 'words',
-      words: `${words.readBy ?? 'Somebody'} read the words ${what} and ${verdict}.`,
+      words: `${words.readBy ?? 'Somebody'} read the ${what} and ${verdict}.`,
       detail: [],
       isFault: false,
     },

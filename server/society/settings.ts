@@ -3,7 +3,7 @@ import { z } from 'zod';
 import { dayOf } from '#shared/dates.ts';
 import { LEAST_CARD_PENCE, pence, penceSchema, type Pence } from '#shared/money.ts';
 import type { Db } from '#server/platform/db.ts';
-import { findSetting } from './society-store.ts';
+import { readSettings } from './society-store.ts';
 
 export type GivingSettings = {
   /** The least gift by card; never under the card service's own least. */
@@ -28,24 +28,20 @@ const DEFAULT_LARGE = pence(100_000);
 const DEFAULT_REPEATED_MINUTES = 60;
 
 export async function getGivingSettings(db: Db, at: Date): Promise<GivingSettings> {
-  const day = dayOf(at);
-  const [least, large, minutes, feeFund] = await Promise.all(
-    [
-      SETTING_KEYS.leastGift,
-      SETTING_KEYS.largeGift,
-      SETTING_KEYS.repeatedWithin,
-      SETTING_KEYS.cardFeeFund,
-    ].map((key) => findSetting(db, key, day)),
-  );
-  const leastGiftPence = penceSchema.catch(DEFAULT_LEAST).parse(least);
+  const settings = await readSettings(db, dayOf(at));
+  const leastGiftPence = penceSchema.catch(DEFAULT_LEAST).parse(settings.get(SETTING_KEYS.leastGift));
   return {
     leastGiftPence: leastGiftPence < LEAST_CARD_PENCE ? LEAST_CARD_PENCE : leastGiftPence,
-    largeGiftPence: penceSchema.catch(DEFAULT_LARGE).parse(large),
-    repeatedWithinMinutes: z.int().positive().catch(DEFAULT_REPEATED_MINUTES).parse(minutes),
+    largeGiftPence: penceSchema.catch(DEFAULT_LARGE).parse(settings.get(SETTING_KEYS.largeGift)),
+    repeatedWithinMinutes: z
+      .int()
+      .positive()
+      .catch(DEFAULT_REPEATED_MINUTES)
+      .parse(settings.get(SETTING_KEYS.repeatedWithin)),
     cardFeeFundSlug: z
       .string()
       .nullable()
       .catch(null)
-      .parse(feeFund ?? null),
+      .parse(settings.get(SETTING_KEYS.cardFeeFund) ?? null),
   };
 }

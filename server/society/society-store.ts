@@ -41,14 +41,16 @@ export async function isGiftAidOffered(db: Db, at: Date): Promise<boolean> {
   return society.giftAidRecognisedOn !== null && society.giftAidRecognisedOn <= dayOf(at);
 }
 
-/** The value that holds on a day, or undefined when none was ever set by then. */
-export async function findSetting(db: Db, key: string, day: Day): Promise<unknown> {
-  const row = await db('settings')
-    .where({ key })
+const settingRow = z.object({ key: z.string(), value: z.unknown() });
+
+/** The value of every setting that holds on a day; one that was never set by then is missing. */
+export async function readSettings(db: Db, day: Day): Promise<Map<string, unknown>> {
+  const rows: unknown[] = await db('settings')
+    .distinctOn('key')
     .where('from_day', '<=', day)
-    .orderBy('from_day', 'desc')
-    .first<{ value: unknown } | undefined>('value');
-  return row?.value;
+    .orderBy([{ column: 'key' }, { column: 'from_day', order: 'desc' }])
+    .select('key', 'value');
+  return new Map(rows.map((row) => settingRow.parse(row)).map(({ key, value }) => [key, value]));
 }
 
 export type WordingKind = 'declaration' | 'consent';

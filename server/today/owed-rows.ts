@@ -1,7 +1,7 @@
 // Says in words what is owed to whom, how long it has waited and what is to be done. Pure.
 import { addDays, dayOf, daysBetween, formatMoment, formatTime, type Day } from '#shared/dates.ts';
 import type { PaymentKind } from '#shared/giving/desk-schemas.ts';
-import { WORDS_KIND_WORDS } from '#shared/giving/desk-words.ts';
+import { DEDICATION_WORDS, wordsOfGift } from '#shared/giving/desk-words.ts';
 import { formatPence } from '#shared/money.ts';
 import type { OwedRow } from '#shared/today/today-schemas.ts';
 import type { HangingEvent, HangingIntent, LetterSubject, UnreadWords } from '#server/giving/index.ts';
@@ -32,11 +32,13 @@ export function tellWait(since: Date, now: Date, withinDays: number): Wait {
 const giftPath = (number: number, place: string): string => `/desk/gifts/${number}#${place}`;
 
 function whatWords(words: UnreadWords): string {
-  if (words.words === null)
-    return `Words ${WORDS_KIND_WORDS[words.kind]} with gift ${words.giftNumber}: the treasurer reads them`;
+  const name = wordsOfGift(words.kind, words.giftNumber);
+  if (words.words === null) return `To be read by the treasurer: the ${name}`;
   const stop = /[.!?]$/.test(words.words) ? '' : '.';
   const told = words.hasContact ? `${stop} The family is told once they are passed.` : '';
-  return `Words to read, ${WORDS_KIND_WORDS[words.kind]}: “${words.words}”${told}`;
+  const dedicated =
+    words.kind === 'memory' || words.kind === 'honour' ? `, ${DEDICATION_WORDS[words.kind]} of` : ':';
+  return `To read, the ${name}${dedicated} “${words.words}”${told}`;
 }
 
 export function wordsRow(words: UnreadWords, now: Date, mayJudge: boolean): OwedRow {

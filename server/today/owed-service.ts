@@ -63,9 +63,10 @@ export async function listOwed(db: Db, person: Reader, now: Date): Promise<OwedR
 
 export async function readToday(db: Db, person: Reader, now: Date): Promise<Today> {
   const since = new Date(now.getTime() - HISTORY_MS);
+  const readsGifts = mayReadGifts(person);
   const [rows, history] = await Promise.all([
     listOwed(db, person, now),
-    mayReadGifts(person) ? listGiftHistory(db, since, HISTORY_LINES) : [],
+    readsGifts ? listGiftHistory(db, since, HISTORY_LINES) : [],
   ]);
-  return { day: dayOf(now), rows, history };
+  return { day: dayOf(now), mayReadGifts: readsGifts, rows, history };
 }

@@ -7,7 +7,10 @@ type DescribedPart = { name: string; state: PartState; stillNeededPence: Pence; 
 const lowerFirst = (name: string): string => name.charAt(0).toLowerCase() + name.slice(1);
 const withThe = (name: string): string =>
   /^(the|her|his|a|an) /i.test(name) ? lowerFirst(name) : `the ${lowerFirst(name)}`;
-const isAre = (names: readonly string[]): string => (names.length === 1 ? 'is' : 'are');
+/** “Forearm and hand” and “the 24 panes” are one part each, and more than one thing. */
+const isPlural = (name: string): boolean => / and /.test(name) || /[^s]s$/.test(name);
+const areMany = (names: readonly string[]): boolean => names.length > 1 || names.some(isPlural);
+const isAre = (names: readonly string[]): string => (areMany(names) ? 'are' : 'is');
 
 /** a; a and b; a, b and c */
 export const listInWords = (names: readonly string[]): string =>
@@ -47,10 +50,11 @@ function needing(parts: readonly DescribedPart[]): string {
   const unpaid = parts.filter((part) => part.stillNeededPence > 0);
   const [next, ...later] = unpaid;
   if (!next) return 'Every part is paid for.';
-  const first = `${capital(withThe(next.name))} ${/s$/.test(next.name) && !/ss$/.test(next.name) ? 'need' : 'needs'} ${formatPence(next.stillNeededPence)} more`;
-  return later.length === 0
+  const first = `${capital(withThe(next.name))} ${isPlural(next.name) ? 'need' : 'needs'} ${formatPence(next.stillNeededPence)} more`;
+  const after = later.map((part) => withThe(part.name));
+  return after.length === 0
     ? `${first}.`
-    : `${first}; after that come ${listInWords(later.map((part) => withThe(part.name)))}.`;
+    : `${first}; after that ${areMany(after) ? 'come' : 'comes'} ${listInWords(after)}.`;
 }
 
 /** 0.5 m, 4.92 m: millimetres in metres without needless noughts. */

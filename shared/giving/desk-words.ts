@@ -13,12 +13,24 @@ export const THANKS_WORDS: Record<ThanksState, string> = {
   'not-written': 'not yet written',
 };
 
-export const WORDS_KIND_WORDS: Record<WordsKind, string> = {
-  'wall-name': 'for the wall',
-  memory: 'in memory of',
-  honour: 'in honour of',
-  message: 'message to the society',
+/** Each kind as it stands alone, above the words themselves. */
+export const WORDS_KIND_HEADS: Record<WordsKind, string> = {
+  'wall-name': 'Words for the wall',
+  memory: 'Dedication, in memory of',
+  honour: 'Dedication, in honour of',
+  message: 'Message to the people who build her',
 };
+
+export const WORDS_KIND_NOUNS: Record<WordsKind, string> = {
+  'wall-name': 'wall words',
+  memory: 'dedication',
+  honour: 'dedication',
+  message: 'message',
+};
+
+/** “dedication of gift 641”, “message with gift 641” */
+export const wordsOfGift = (kind: WordsKind, giftNumber: number): string =>
+  `${WORDS_KIND_NOUNS[kind]} ${kind === 'message' ? 'with' : 'of'} gift ${giftNumber}`;
 
 export const DEDICATION_WORDS = { memory: 'in memory', honour: 'in honour' } as const;
 

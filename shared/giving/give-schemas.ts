@@ -20,6 +20,7 @@ export const DEDICATIONS = ['none', 'memory', 'honour'] as const;
 /** Where a giver's name may be seen. */
 export const NAME_CHOICES = ['wall', 'not-public', 'treasurer-only'] as const;
 export const WALL_LETTERS = 40;
+export const MESSAGE_LETTERS = 600;
 
 const text = () => z.string().overwrite(keepable).trim();
 const line = (most: number, words: string) => text().max(most, `${words} Use at most ${most} letters.`);
@@ -30,7 +31,7 @@ export const giveFormSchema = z.strictObject({
   amount: z.enum(GIFT_CHOICES, 'Choose £5, £20, £60 or write another sum.').default('20'),
   other: line(30, 'Write the sum in pounds, in figures.').default(''),
   towards: text().max(80, 'Choose from the list what your gift is for.').default('whole'),
-  dedication: z.enum(DEDICATIONS, 'Choose in memory, in honour, or neither.').default('none'),
+  dedication: z.enum(DEDICATIONS, 'Choose “In memory of”, “In honour of” or “Neither”.').default('none'),
   dedicationName: line(120, 'Write the name.').default(''),
   contactName: line(120, 'Write the name.').default(''),
   contactEmail: line(254, 'Write the address.').default(''),
@@ -53,7 +54,7 @@ export const giveFormSchema = z.strictObject({
   byPhone: tick,
   /** The versions of declaration and consent that stood on the sheet, as `declaration.consent`; never typed. */
   shownWordings: line(20, 'Load the page again.').default(''),
-  message: line(600, 'Make the message shorter.').default(''),
+  message: line(MESSAGE_LETTERS, 'Make the message shorter.').default(''),
 });
 export type GiveForm = z.input<typeof giveFormSchema>;
 export type GiveFormFilled = z.output<typeof giveFormSchema>;
@@ -164,11 +165,11 @@ function checkDetails(form: GiveFormFilled, ctx: Context): void {
 
 function checkDedication(form: GiveFormFilled, ctx: Context): void {
   if (form.dedication === 'none') return;
-  if (!form.dedicationName) ask(ctx, 'dedicationName', 'Write the name, or choose neither.');
+  if (!form.dedicationName) ask(ctx, 'dedicationName', 'Write the name, or choose “Neither”.');
   const emailWords = form.contactEmail ? emailFault(form.contactEmail) : null;
   if (emailWords) ask(ctx, 'contactEmail', emailWords);
   if (form.contactEmail && !form.contactName)
-    ask(ctx, 'contactName', 'Write whom we should tell, or leave out their address.');
+    ask(ctx, 'contactName', 'Write whom we should tell, or leave out their e-mail.');
   if (form.contactName && !form.contactEmail)
     ask(ctx, 'contactEmail', 'Write where we should tell them, or leave out their name.');
 }

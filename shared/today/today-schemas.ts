@@ -41,6 +41,8 @@ export type OwedRow = z.infer<typeof owedRowSchema>;
 
 export const todaySchema = z.object({
   day: daySchema,
+  /** False: nothing of gifts is told, so an empty list says nothing about them. */
+  mayReadGifts: z.boolean(),
   rows: z.array(owedRowSchema),
   /** Newest first: what was done to gifts since yesterday. */
   history: z.array(historyLineSchema),

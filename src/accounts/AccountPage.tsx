@@ -12,12 +12,9 @@ import { ChangePasswordForm } from './ChangePasswordForm.tsx';
 import { RenewCodesForm } from './RenewCodesForm.tsx';
 import { roleWords } from './role-words.ts';
 
+/** That none is left is said, with what to do about it, above the form that makes new ones. */
 const codesLeft = (count: number): string =>
-  count === 0
-    ? 'No recovery code is left'
-    : count === 1
-      ? 'One recovery code is left'
-      : `${count} recovery codes are left`;
+  count === 0 ? '' : count === 1 ? '. One recovery code is left' : `. ${count} recovery codes are left`;
 
 function Facts({ account }: { account: Account }) {
   const { secondFactor } = account;
@@ -43,7 +40,7 @@ function Facts({ account }: { account: Account }) {
         <dd>
           {secondFactor.since === null
             ? 'not set up'
-            : `set up on ${formatMoment(new Date(secondFactor.since))}. ${codesLeft(secondFactor.recoveryCodesLeft)}`}
+            : `set up on ${formatMoment(new Date(secondFactor.since))}${codesLeft(secondFactor.recoveryCodesLeft)}`}
           {'. '}
           <Link to={withNext(accountPaths.secondFactorSetup, accountPaths.account)}>
             {secondFactor.isOn ? 'Move it to another telephone' : 'Set it up'}
@@ -74,6 +71,11 @@ export function AccountPage() {
             {account.secondFactor.isOn && (
               <section className="sec" aria-labelledby="codes">
                 <h2 id="codes">Recovery codes</h2>
+                {account.secondFactor.recoveryCodesLeft === 0 && (
+                  <p className="overdue">
+                    No recovery code is left. Make new ones, so that a lost phone does not lock you out.
+                  </p>
+                )}
                 <RenewCodesForm />
               </section>
             )}

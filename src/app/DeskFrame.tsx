@@ -4,6 +4,7 @@ import { personSchema } from '#shared/accounts/session-schemas.ts';
 import { LeaveButton } from '#src/accounts/LeaveButton.tsx';
 import { roleWords } from '#src/accounts/role-words.ts';
 import { RunOutNotice } from '#src/accounts/RunOutNotice.tsx';
+import { useArrivalFocus } from '#src/accounts/use-arrival-focus.ts';
 import { useRunOut } from '#src/accounts/use-run-out.ts';
 import { DeskRail } from './DeskRail.tsx';
 import { usePageTurn } from './use-page-turn.ts';
@@ -12,6 +13,7 @@ export function DeskFrame() {
   const person = personSchema.parse(useLoaderData());
   const ranOut = useRunOut(person);
   usePageTurn('The desk');
+  useArrivalFocus();
   return (
     <div className="desk">
       <a className="skip" href="#sheet">

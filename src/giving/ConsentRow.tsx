@@ -2,6 +2,7 @@
 import { Choice } from '#src/ui/Choice.tsx';
 import { ChoiceGroup } from '#src/ui/ChoiceGroup.tsx';
 import { SheetRow } from '#src/ui/SheetRow.tsx';
+import { GIVE_LABELS } from './give-words.ts';
 import { tickProps } from './sheet-fields.ts';
 import type { SheetControls } from './use-give-form.ts';
 
@@ -12,12 +13,12 @@ export function ConsentRow({ controls, wording, number }: Props) {
     <SheetRow
       number={number}
       heading="May we write to you?"
-      note="Nothing is ticked for you. You always get your receipt and one thank-you. Every letter says how to stop the rest."
+      note="Your receipt and one thank-you always come. To stop the rest, do as any letter says, or tell us."
     >
       <ChoiceGroup name="byEmail" legend={wording} isLegendShown fault={controls.faults.byEmail}>
-        <Choice {...tickProps(controls, 'byEmail')}>By e-mail, when something changes on the figure</Choice>
-        <Choice {...tickProps(controls, 'byPost')}>By post, about twice a year</Choice>
-        <Choice {...tickProps(controls, 'byPhone')}>By telephone or text, for work days</Choice>
+        <Choice {...tickProps(controls, 'byEmail')}>{GIVE_LABELS.byEmail}</Choice>
+        <Choice {...tickProps(controls, 'byPost')}>{GIVE_LABELS.byPost}</Choice>
+        <Choice {...tickProps(controls, 'byPhone')}>{GIVE_LABELS.byPhone}</Choice>
       </ChoiceGroup>
     </SheetRow>
   );

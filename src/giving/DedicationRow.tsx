@@ -7,7 +7,7 @@ import { radioProps, textProps, tickProps } from './sheet-fields.ts';
 import type { SheetControls } from './use-give-form.ts';
 
 const NOTE =
-  'If we may tell one of the family, leave their name and address. They hear of it once a person here has read the words. We tell them your name, unless you hide it from everybody below, and never the sum unless you tick it.';
+  'If we may tell one of the family, leave their name and e-mail. They hear of it once a person here has read the words. We tell them your name, unless you hide it from everybody below, and never the sum unless you tick it.';
 
 export function DedicationRow({ controls, number }: { controls: SheetControls; number: number }) {
   return (
@@ -34,14 +34,12 @@ export function DedicationRow({ controls, number }: { controls: SheetControls; n
           <div className="pair">
             <TextField
               {...textProps(controls, 'contactName')}
-              label="Whom we should tell"
               isOptional
               autoComplete="off"
               spellCheck={false}
             />
             <TextField
               {...textProps(controls, 'contactEmail')}
-              label="Their e-mail"
               isOptional
               type="email"
               autoComplete="off"

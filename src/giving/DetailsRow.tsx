@@ -6,14 +6,18 @@ import { textProps, tickProps } from './sheet-fields.ts';
 import type { SheetControls } from './use-give-form.ts';
 
 const NOTE = 'The greeting is how every letter to you will begin: “Dear …”.';
-const ADDRESS_NOTE = 'We need your home address only for Gift Aid and for letters by post.';
+const PHONE_NOTE = 'We need your telephone number only if you tick the telephone.';
 
 type Props = { controls: SheetControls; number: number; isGiftAidOffered: boolean };
 
 export function DetailsRow({ controls, number, isGiftAidOffered }: Props) {
-  const address = isGiftAidOffered ? ADDRESS_NOTE : 'We need your home address only for letters by post.';
+  const uses = isGiftAidOffered ? 'Gift Aid or letters by post' : 'letters by post';
   return (
-    <SheetRow number={number} heading="Your details" note={`${address} ${NOTE}`}>
+    <SheetRow
+      number={number}
+      heading="Your details"
+      note={`We need your home address only if you tick ${uses}. ${PHONE_NOTE} ${NOTE}`}
+    >
       <div className="pair">
         <TextField {...textProps(controls, 'name')} autoComplete="name" spellCheck={false} />
         <TextField
@@ -30,20 +34,22 @@ export function DetailsRow({ controls, number, isGiftAidOffered }: Props) {
         autoComplete="email"
         spellCheck={false}
       />
-      <TextField {...textProps(controls, 'address1')} autoComplete="address-line1" />
+      <TextField {...textProps(controls, 'address1')} isOptional autoComplete="address-line1" />
       <div className="pair">
         <TextField {...textProps(controls, 'address2')} isOptional autoComplete="address-line2" />
-        <TextField {...textProps(controls, 'town')} autoComplete="address-level2" />
+        <TextField {...textProps(controls, 'town')} isOptional autoComplete="address-level2" />
       </div>
       <div className="pair">
         <TextField
           {...textProps(controls, 'postcode')}
+          isOptional
           isShort
           autoComplete="postal-code"
           spellCheck={false}
         />
         <TextField
           {...textProps(controls, 'phone')}
+          isOptional
           hint="Only if you tick the telephone below."
           type="tel"
           autoComplete="tel"

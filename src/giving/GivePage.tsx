@@ -2,6 +2,7 @@
 import { useEffect } from 'react';
 import { useActionData, useLoaderData, useLocation } from 'react-router-dom';
 import { ErrorSummary, faultsHeading } from '#src/ui/ErrorSummary.tsx';
+import { goToAnswer } from '#src/ui/go-to-answer.ts';
 import { SendButton } from '#src/ui/SendButton.tsx';
 import { Trouble } from '#src/ui/Trouble.tsx';
 import { AmountRow } from './AmountRow.tsx';
@@ -26,7 +27,7 @@ function usePlainAddress() {
   const { hash, search } = useLocation();
   useEffect(() => {
     if (search !== '') window.history.replaceState(window.history.state, '', `/give${hash}`);
-    if (hash !== '') document.getElementById(hash.slice(1))?.focus();
+    if (hash !== '') goToAnswer(hash.slice(1));
   }, [hash, search]);
 }
 

@@ -1,6 +1,6 @@
 // Where a giver's name may stand, and a message if there is one.
 import { useWatch } from 'react-hook-form';
-import { WALL_LETTERS } from '#shared/giving/give-schemas.ts';
+import { MESSAGE_LETTERS, WALL_LETTERS } from '#shared/giving/give-schemas.ts';
 import { countLetters } from '#shared/giving/text-rules.ts';
 import { Choice } from '#src/ui/Choice.tsx';
 import { ChoiceGroup } from '#src/ui/ChoiceGroup.tsx';
@@ -12,14 +12,17 @@ import { radioProps, textProps } from './sheet-fields.ts';
 import type { SheetControls } from './use-give-form.ts';
 
 export function WallRow({ controls, number }: { controls: SheetControls; number: number }) {
-  const words = useWatch({ control: controls.form.control, name: 'wallWords' });
+  const [words, message] = useWatch({ control: controls.form.control, name: ['wallWords', 'message'] });
+  const isHydrated = useHydrated();
   // A count that stands still while somebody writes would be worse than none.
-  const count = useHydrated() && words ? ` ${countLetters(words)} so far.` : '';
+  const count = isHydrated && words ? ` ${countLetters(words)} so far.` : '';
+  // Counted as the rule for messages counts, so that the two never disagree.
+  const messageCount = isHydrated && message ? ` ${message.trim().length} so far.` : '';
   return (
     <SheetRow
       number={number}
       heading="The givers’ wall"
-      note="The sum is never shown beside a name. A name and a message are read by a person here before anybody else sees them."
+      note="The sum is never shown beside a name. A name is read by a person here before it goes up. A message is read by a person at the desk, then by the people who build her; it is never shown to the public."
     >
       <ChoiceGroup name="wall" legend="Your name on the givers’ wall" fault={controls.faults.wall}>
         <Choice {...radioProps(controls, 'wall', 'wall', true)}>Put a name up, in exactly these words</Choice>
@@ -38,8 +41,8 @@ export function WallRow({ controls, number }: { controls: SheetControls; number:
       </ChoiceGroup>
       <TextBox
         {...textProps(controls, 'message')}
-        label="A message to the people who build her"
         isOptional
+        hint={`Up to ${MESSAGE_LETTERS} letters.${messageCount}`}
         rows={2}
       />
     </SheetRow>

@@ -7,17 +7,17 @@ import { add, formatPence, type Pence } from '#shared/money.ts';
 /** In the order of the sheet; the summary of what needs putting right follows it. */
 export const GIVE_LABELS: Record<GiveField, string> = {
   amount: 'How much',
-  other: 'Another sum',
+  other: 'Other £',
   towards: 'Towards',
   dedication: 'In memory or in honour',
   dedicationName: 'Their name',
-  contactName: 'Name of the family contact',
-  contactEmail: 'E-mail of the family contact',
-  contactSum: 'Tell them the sum',
+  contactName: 'Whom we should tell',
+  contactEmail: 'Their e-mail',
+  contactSum: 'Tell them how much I gave',
   wall: 'The givers’ wall',
   wallWords: 'Words on the wall',
   shownWordings: 'The words of this page',
-  message: 'A message',
+  message: 'A message to the people who build her',
   name: 'Full name',
   greeting: 'How should we greet you?',
   email: 'E-mail',
@@ -30,7 +30,7 @@ export const GIVE_LABELS: Record<GiveField, string> = {
   declare: 'Gift Aid',
   byEmail: 'By e-mail',
   byPost: 'By post',
-  byPhone: 'By telephone',
+  byPhone: 'By telephone or text',
 };
 
 const ARTICLE = /^the\s+/i;

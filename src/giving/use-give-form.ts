@@ -60,7 +60,7 @@ export function useGiveForm({ sheet, faults }: GivePageData, sent: SheetTrouble 
     // On registering, the form library takes the choice that was drawn for the one that was made.
     for (const field of CHOICES) form.setValue(field, written[field]);
   }, [form, written]);
-  const markKept = useQuietKeeping(form.getValues);
+  const { markKept, keepNow } = useQuietKeeping(form.getValues);
   const submit = useSubmit();
   const isWorking = useNavigation().formAction !== undefined;
   const press = form.handleSubmit(
@@ -69,7 +69,10 @@ export function useGiveForm({ sheet, faults }: GivePageData, sent: SheetTrouble 
       markKept();
       void submit(event.target);
     },
-    (errors) => setLast({ fields: wordsOf(errors) }),
+    (errors) => {
+      keepNow();
+      setLast({ fields: wordsOf(errors) });
+    },
   );
   const controls: SheetControls = { form, start, faults: last.fields ?? {} };
   return { controls, trouble: last.trouble, isWorking, press };

@@ -6,42 +6,48 @@ import { keepDraftQuietly } from './give-queries.ts';
 
 const PAUSE_MS = 3_000;
 
-/** @returns what to call when the sheet was sent in the ordinary way, so that it is not sent once more. */
-export function useQuietKeeping(readTexts: () => FormTexts): () => void {
+type QuietKeeping = {
+  /** When the sheet was sent in the ordinary way, so that it is not sent once more. */
+  markKept: () => void;
+  /** When a press went no further than the page: loading it anew must find what was typed. */
+  keepNow: () => void;
+};
+
+export function useQuietKeeping(readTexts: () => FormTexts): QuietKeeping {
   const lastKept = useRef<string | undefined>(undefined);
   const markKept = useCallback(() => {
     lastKept.current = JSON.stringify(keptAnswers(readTexts()));
   }, [readTexts]);
+  const keepNow = useCallback(() => {
+    const answers = keptAnswers(readTexts());
+    const now = JSON.stringify(answers);
+    if (now === lastKept.current) return;
+    lastKept.current = now;
+    keepDraftQuietly(answers);
+  }, [readTexts]);
   useEffect(() => {
     if (lastKept.current === undefined) markKept();
-    const keepWhatIsNew = () => {
-      const answers = keptAnswers(readTexts());
-      const now = JSON.stringify(answers);
-      if (now === lastKept.current) return;
-      lastKept.current = now;
-      keepDraftQuietly(answers);
-    };
     const onHiding = () => {
-      if (document.visibilityState === 'hidden') keepWhatIsNew();
+      if (document.visibilityState === 'hidden') keepNow();
     };
     let pause: number | undefined;
     const onWriting = () => {
       window.clearTimeout(pause);
-      pause = window.setTimeout(keepWhatIsNew, PAUSE_MS);
+      pause = window.setTimeout(keepNow, PAUSE_MS);
     };
     document.addEventListener('input', onWriting);
     document.addEventListener('visibilitychange', onHiding);
     // A page fetched anew is asked for before this one is hidden: what was typed must be there by then.
-    window.addEventListener('beforeunload', keepWhatIsNew);
-    window.addEventListener('pagehide', keepWhatIsNew);
+    window.addEventListener('beforeunload', keepNow);
+    window.addEventListener('pagehide', keepNow);
     return () => {
       window.clearTimeout(pause);
       document.removeEventListener('input', onWriting);
       document.removeEventListener('visibilitychange', onHiding);
-      window.removeEventListener('beforeunload', keepWhatIsNew);
-      window.removeEventListener('pagehide', keepWhatIsNew);
-      keepWhatIsNew();
+      window.removeEventListener('beforeunload', keepNow);
+      window.removeEventListener('pagehide', keepNow);
+      keepNow();
     };
-  }, [readTexts, markKept]);
-  return markKept;
+  }, [markKept, keepNow]);
+  return { markKept, keepNow };
 }

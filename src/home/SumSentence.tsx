@@ -2,11 +2,14 @@
 import type { Campaign } from '#shared/campaign/campaign-schemas.ts';
 import { add, NOTHING } from '#shared/money.ts';
 import { MoneyText } from '#src/ui/MoneyText.tsx';
+import { inSentence } from './part-words.ts';
+import { nextPart } from './reach-words.ts';
 
 const count = new Intl.NumberFormat('en-GB');
 
 export function SumSentence({ campaign }: { campaign: Campaign }) {
   const { givenPence, goalPence, givers, parts, reach } = campaign;
+  const next = nextPart(campaign);
   const stillPence = add(NOTHING, ...parts.map((part) => part.stillNeededPence));
   const inKindPence = add(NOTHING, ...parts.flatMap((part) => part.inKind.map((one) => one.amountPence)));
   return (
@@ -35,8 +38,9 @@ export function SumSentence({ campaign }: { campaign: Campaign }) {
       )}
       {reach.waitingPence > 0 && (
         <p className="aside">
-          <MoneyText pence={reach.waitingPence} /> of what is given is meant for higher parts, and lifts the
-          line when it gets there.
+          <MoneyText pence={reach.waitingPence} /> of what is given is meant for parts above{' '}
+          {next ? `${inSentence(next.name)}, which is being paid for now` : 'the one being paid for now'}. It
+          lifts the line when the line gets there.
         </p>
       )}
     </div>

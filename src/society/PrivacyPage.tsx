@@ -18,8 +18,8 @@ function WhatWeKeep() {
         </dd>
         <dt>When you dedicate a gift</dt>
         <dd>
-          The name you give us, and the address of one family contact if you want somebody told. We use that
-          address for this one letter and for nothing else.
+          The name you give us, and the name and e-mail address of one family contact if you want somebody
+          told. We use that address for this one letter and for nothing else.
         </dd>
         <dt>When you ask for your name on the wall</dt>
         <dd>Your words, exactly as you typed them, because you asked us to show them.</dd>
@@ -29,7 +29,10 @@ function WhatWeKeep() {
           stop as soon as you say so.
         </dd>
         <dt>When you write us a message</dt>
-        <dd>The message. People at the desk read it; it is not shown to the public.</dd>
+        <dd>
+          The message. A person at the desk reads it, and then the people who build her. It is never shown to
+          the public.
+        </dd>
       </dl>
       <p>
         Your card’s number goes straight to the card service that takes the payment. We never see it and never
@@ -55,7 +58,10 @@ function HowLong() {
       <h2>Who else sees it</h2>
       <p>
         The card service, for the payment. The tax office, for Gift Aid. The company that carries our mail.
-        Our examiner, who checks the books. Nobody else. We do not sell, lend or swap names.
+        Our examiner, who checks the books. One of the family, if you dedicate a gift and ask us to tell them:
+        we tell them your name, unless you hide it from everybody, and never the sum unless you tick it. The
+        people who build her, if you write them a message. Everybody, for the words you want on the wall.
+        Nobody else. We do not sell, lend or swap names.
       </p>
     </>
   );

@@ -32,9 +32,9 @@ export function UsingThisSitePage() {
       </p>
       <h2>Where it falls short</h2>
       <p>
-        The levelling staff beside the figure hides some of its sums on a narrow screen, where they would run
-        into each other; a screen reader still reads all of them. The card payment page belongs to the card
-        service and follows its own statement.
+        The levelling staff beside the figure hides some of its sums where they would stand too close to each
+        other; a screen reader still reads all of them. The card payment page belongs to the card service and
+        follows its own statement.
       </p>
       <h2>Tell us</h2>
       <p>

@@ -1,9 +1,8 @@
 // Words passed from Today with one press; or held back, which keeps them from everybody.
 import { useQueryClient } from '@tanstack/react-query';
 import type { OwedAction } from '#shared/today/today-schemas.ts';
-import { WORDS_KIND_WORDS } from '#shared/giving/desk-words.ts';
+import { wordsOfGift } from '#shared/giving/desk-words.ts';
 import { useJudgeWords } from '#src/giving/desk/gift-desk-queries.ts';
-import { focusNextThing } from './focus-next-thing.ts';
 import { TODAY } from './today-queries.ts';
 
 type Props = { action: Extract<OwedAction, { kind: 'judge' }>; isNext: boolean };
@@ -11,23 +10,25 @@ type Props = { action: Extract<OwedAction, { kind: 'judge' }>; isNext: boolean }
 export function JudgeButtons({ action, isNext }: Props) {
   const queryClient = useQueryClient();
   const judge = useJudgeWords();
-  const name = `the words ${WORDS_KIND_WORDS[action.wordsKind]} of gift ${action.giftNumber}`;
-  const decide = (verdict: 'passed' | 'held') => () =>
+  const name = `the ${wordsOfGift(action.wordsKind, action.giftNumber)}`;
+  const decide = (verdict: 'passed' | 'held') => () => {
+    if (judge.isPending) return;
     judge.mutate(
       { giftNumber: action.giftNumber, wordsId: action.wordsId, verdict },
-      { onSettled: () => void queryClient.invalidateQueries({ queryKey: TODAY }).then(focusNextThing) },
+      { onSettled: () => void queryClient.invalidateQueries({ queryKey: TODAY }) },
     );
+  };
   return (
     <>
       <button
         type="button"
         className={isNext ? 'act first' : 'act'}
-        disabled={judge.isPending}
+        aria-disabled={judge.isPending}
         onClick={decide('passed')}
       >
         Pass<span className="vh"> {name}</span>
       </button>{' '}
-      <button type="button" className="act word" disabled={judge.isPending} onClick={decide('held')}>
+      <button type="button" className="act word" aria-disabled={judge.isPending} onClick={decide('held')}>
         hold back<span className="vh"> {name}</span>
       </button>
       {judge.isError && (

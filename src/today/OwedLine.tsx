@@ -15,7 +15,7 @@ export function OwedLine({ row, isNext, dayHead }: Props) {
   const [isOpen, setOpen] = useState(false);
   const isLate = row.due === 'late';
   return (
-    <tr role="row">
+    <tr role="row" data-owed={row.id}>
       {dayHead}
       <td role="cell" className={isLate ? 'due late' : 'due'}>
         {isLate ? shortDay(row.dueDay) : 'today'}

@@ -4,6 +4,7 @@ import { dayOfMonth, formatDay, monthOf, weekdayOf, type Day } from '#shared/dat
 import type { OwedRow } from '#shared/today/today-schemas.ts';
 import { HeadRow } from '#src/ui/HeadRow.tsx';
 import { OwedLine } from './OwedLine.tsx';
+import { useRowThatLeft } from './use-row-that-left.ts';
 
 type Props = { day: Day; rows: readonly OwedRow[] };
 
@@ -66,8 +67,9 @@ export function OwedTable({ day, rows }: Props) {
   const late = rows.filter((row) => row.due === 'late');
   const today = rows.filter((row) => row.due === 'today');
   const nextId = rows[0]?.id;
+  const { onFocus } = useRowThatLeft([...late, ...today].map((row) => row.id));
   return (
-    <table role="table" className="ruled daylist">
+    <table role="table" className="ruled daylist" onFocus={onFocus}>
       <caption className="vh">What is owed, by day</caption>
       <HeadRow heads={HEADS} />
       {late.length > 0 && (

@@ -5,7 +5,6 @@ import { settlePaymentSchema } from '#shared/giving/desk-schemas.ts';
 import type { OwedAction } from '#shared/today/today-schemas.ts';
 import { useSettlePayment } from '#src/giving/desk/gift-desk-queries.ts';
 import { TextField } from '#src/ui/TextField.tsx';
-import { focusNextThing } from './focus-next-thing.ts';
 import { TODAY } from './today-queries.ts';
 
 type Props = { action: Extract<OwedAction, { kind: 'settle' }> };
@@ -22,7 +21,7 @@ export function SettlePayment({ action: { paymentKind, paymentId } }: Props) {
     if (!parsed.success) return;
     settle.mutate(
       { paymentKind, paymentId, ...parsed.data },
-      { onSettled: () => void queryClient.invalidateQueries({ queryKey: TODAY }).then(focusNextThing) },
+      { onSettled: () => void queryClient.invalidateQueries({ queryKey: TODAY }) },
     );
   };
   return (

@@ -48,8 +48,11 @@ export function TodayPage() {
           <AskAgain what="What is owed" error={answer.error} onAgain={() => void answer.refetch()} />
         )}
         {today && <OwedTable day={today.day} rows={today.rows} />}
-        <VerdictTold />
-        {today?.rows.length === 0 && (
+        <VerdictTold rows={today?.rows ?? []} />
+        {today?.rows.length === 0 && !today.mayReadGifts && (
+          <p className="after">Nothing here waits for you.</p>
+        )}
+        {today?.rows.length === 0 && today.mayReadGifts && (
           <p className="after">
             Every giver is thanked, every payment is in the books, and all words are read.{' '}
             <Link to="/desk/gifts">Look through the gifts</Link>.

@@ -1,6 +1,7 @@
 // What needs putting right, said once above the form and linked to each answer; it takes the focus.
 import { useEffect, useRef, type MouseEvent } from 'react';
 import type { FieldFaults } from '#shared/errors.ts';
+import { goToAnswer } from './go-to-answer.ts';
 
 const COUNTS = ['No', 'One', 'Two', 'Three', 'Four', 'Five', 'Six', 'Seven', 'Eight', 'Nine', 'Ten'];
 
@@ -10,13 +11,9 @@ export function faultsHeading(count: number): string {
   return count === 1 ? `${words} answer needs putting right` : `${words} answers need putting right`;
 }
 
-function goToAnswer(event: MouseEvent<HTMLAnchorElement>, id: string): void {
-  const answer = document.getElementById(id);
-  if (!answer) return;
+function followLink(event: MouseEvent<HTMLAnchorElement>, id: string): void {
   // Following the link itself would make a new step in the browser's history for each answer.
-  event.preventDefault();
-  answer.focus();
-  answer.scrollIntoView({ block: 'center' });
+  if (goToAnswer(id)) event.preventDefault();
 }
 
 const lowerFirst = (words: string) => words.charAt(0).toLowerCase() + words.slice(1);
@@ -35,7 +32,7 @@ export function ErrorSummary<F extends string>({ faults, labels }: Props<F>) {
       <ul>
         {inOrder.map((field) => (
           <li key={field}>
-            <a href={`#${field}`} onClick={(event) => goToAnswer(event, field)}>
+            <a href={`#${field}`} onClick={(event) => followLink(event, field)}>
               {named[field]}: {lowerFirst(faults[field] ?? '')}
             </a>
           </li>

@@ -28,7 +28,7 @@ test('each kind of part is told in its own sentence', () => {
   ).toEqual([
     'The footing and the lower skirt are in place. The figure stands 2.1 m above the ground today.',
     'The body is being made; the left arm is paid for and next in turn.',
-    'The forearm and hand needs £3,955 more; after that come the 24 panes.',
+    'The forearm and hand need £3,955 more; after that come the 24 panes.',
   ]);
 });
 
@@ -42,6 +42,20 @@ test('an empty green and a finished figure read rightly', () => {
     'The whole figure is in place.',
     'Nothing is being made just now.',
     'Every part is paid for.',
+  ]);
+});
+
+test('one part may be more than one thing', () => {
+  expect(
+    describeFigure([
+      part('Head and scarf', 'making'),
+      part('Left arm', 'planned', 100),
+      part('Body', 'planned', 100),
+    ]),
+  ).toEqual([
+    'Nothing of the figure stands yet.',
+    'The head and scarf are being made.',
+    'The left arm needs £1 more; after that comes the body.',
   ]);
 });
 

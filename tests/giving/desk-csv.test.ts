@@ -53,9 +53,11 @@ describe('the CSV', () => {
         '2026-02-01',
         '20.00',
         '1234.05',
+        '10:00',
+        'on the wall',
       ]),
     );
-    expect(cells).toHaveLength((names.length + 1) * 11);
+    expect(cells).toHaveLength((names.length + 1) * 12);
   });
 
   it('holds every gift of the filter, not only a page, and leaves an audit line', async () => {

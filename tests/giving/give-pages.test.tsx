@@ -128,6 +128,7 @@ describe('the check', () => {
       'What a surplus means.',
     ])
       expect(all).toContain(words);
+    expect(all).toContain('Change Gift Aid');
     expect(text('.sums')).toBe(
       'What you pay and what it is worthYou pay today£60Gift Aid for her£15Worth to the Lampwoman£75',
     );

@@ -60,7 +60,8 @@ describe('the home page', () => {
       lampwoman({ inKindPounds: { 'lantern-frame': 600 }, meantPounds: { panes: 225 }, withLifting: true }),
     );
     holds(html, '£600 met by Thornquay Plate in kind');
-    holds(html, '£225</span> of what is given is meant for higher parts');
+    holds(html, '£225</span> of what is given is meant for parts above the ');
+    holds(html, ', which is being paid for now. It lifts the line');
     holds(html, 'after the shoulders');
   });
 

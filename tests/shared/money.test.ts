@@ -22,7 +22,11 @@ test('sums are written as people read them', () => {
 });
 
 test('sums are said in words', () => {
-  expect(sumInWords(pence(123_450))).toBe('one thousand two hundred and thirty four pounds and fifty pence');
+  expect(sumInWords(pence(123_450))).toBe('one thousand two hundred and thirty-four pounds and fifty pence');
+  expect(sumInWords(pence(9_999_999))).toBe(
+    'ninety-nine thousand nine hundred and ninety-nine pounds and ninety-nine pence',
+  );
+  expect(sumInWords(pence(2_000_000))).toBe('twenty thousand pounds');
   expect(sumInWords(pence(101))).toBe('one pound and one penny');
   expect(sumInWords(pence(50))).toBe('fifty pence');
 });

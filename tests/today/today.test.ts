@@ -92,7 +92,7 @@ describe('words nobody has read', () => {
       ['today', '2027-05-04', 0, 'since 8am'],
     ]);
     expect(rows[1]).toMatchObject({
-      what: 'Words to read, in memory of: “Albert Rudge”. The family is told once they are passed.',
+      what: `To read, the dedication of gift ${fresh.number}, in memory of “Albert Rudge”. The family is told once they are passed.`,
       owedTo: 'Judith Hargreaves and the family',
       action: { kind: 'judge', giftNumber: fresh.number, wordsId: fresh.wordIds[0], words: 'Albert Rudge' },
     });
@@ -272,6 +272,7 @@ describe('over the API', () => {
       .expect(200);
     const today = todaySchema.parse((await person.get('/api/desk/today')).body);
     expect(today.day).toBe('2027-06-11');
+    expect(today.mayReadGifts).toBe(true);
     expect(today.rows).toEqual([]);
     expect(today.history[0]).toMatchObject({
       words: 'Words passed by Joan Pellow.',
@@ -283,7 +284,7 @@ describe('over the API', () => {
     await addGift(app.deps.db, world, { at: ago(3), words: [{ kind: 'message', words: 'Well done' }] });
     for (const role of ['site', 'schools'] as const) {
       const answer = await (await signIn(app, [role])).get('/api/desk/today');
-      expect(todaySchema.parse(answer.body)).toMatchObject({ rows: [], history: [] });
+      expect(todaySchema.parse(answer.body)).toMatchObject({ mayReadGifts: false, rows: [], history: [] });
     }
     expect((await app.agent().get('/api/desk/today')).status).toBe(401);
   });

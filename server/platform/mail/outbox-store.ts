@@ -1,17 +1,9 @@
 // The only file that names the outbox table: one row a letter, and every step that a letter can take.
 import { z } from 'zod';
+import { MAIL_STATES } from '#shared/mail-states.ts';
 import { queryRows, toCount, type Db, type Trx } from '../db.ts';
 
-export const MAIL_STATES = [
-  'queued',
-  'claimed',
-  'handing_over',
-  'sent',
-  'soft_failed',
-  'hard_failed',
-  'suppressed',
-  'uncertain',
-] as const;
+export { MAIL_STATES };
 export const mailStateSchema = z.enum(MAIL_STATES);
 export type MailState = z.infer<typeof mailStateSchema>;
 

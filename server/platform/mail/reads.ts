@@ -1,5 +1,6 @@
 // What the desk sees of letters: those that are owed a decision, those about one thing, one in full.
 import { z } from 'zod';
+import { TRIES_TO_TELL } from '#shared/mail-states.ts';
 import { queryRows, type Db } from '../db.ts';
 import { mailStateSchema } from './outbox-store.ts';
 
@@ -48,8 +49,6 @@ export type MailLine = z.output<typeof mailLineSchema>;
 const COLUMNS = `id, message_id, kind, subject_kind, subject_id, to_name, to_address, subject, state, tries,
   next_try_at, handing_over_at, sent_at, response, settled_by, created_at`;
 
-/** A letter that failed this often (for some 20 minutes) is no passing trouble, and a person should know. */
-const TRIES_TO_TELL = 3;
 const WAIT_TO_TELL_MS = 60 * 60_000;
 const MOST_OWED = 500;
 
@@ -63,7 +62,7 @@ export const listOwedMail = (db: Db, now: Date): Promise<MailLine[]> =>
     mailLineSchema,
     `select ${COLUMNS} from mail_outbox
      where (state in ('hard_failed','uncertain') and settled_by is null)
-        or (state = 'soft_failed' and tries >= ?)
+        or (state = 'soft_failed' and tries >= ? and settled_by is null)
         or (state in ('queued','claimed') and created_at < ?)
      order by created_at, id limit ?`,
     [TRIES_TO_TELL, new Date(now.getTime() - WAIT_TO_TELL_MS), MOST_OWED],

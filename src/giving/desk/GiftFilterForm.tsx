@@ -5,7 +5,7 @@ import type { GiftFilter, GiftList } from '#shared/giving/desk-schemas.ts';
 import { FilterChoice } from './FilterChoice.tsx';
 import { readFilter, toSearch } from './gift-filter.ts';
 
-type Props = { filter: GiftFilter; parts: GiftList['parts']; onFault: (fault: string | null) => void };
+type Props = { filter: GiftFilter; parts: GiftList['parts']; onFault: (fault: string) => void };
 
 const TOWARDS = [
   ['any', 'any part or the whole'],
@@ -26,6 +26,8 @@ const ORDERS = [
   ['largest', 'largest first'],
 ] as const;
 
+const HALF_A_DAY = 'Write each day whole, or leave it empty.';
+
 function typedIn(form: HTMLFormElement): URLSearchParams {
   const typed = new URLSearchParams();
   for (const [key, value] of new FormData(form)) if (typeof value === 'string') typed.set(key, value);
@@ -36,9 +38,11 @@ export function GiftFilterForm({ filter, parts, onFault }: Props) {
   const navigate = useNavigate();
   const show = (event: SubmitEvent<HTMLFormElement>): void => {
     event.preventDefault();
+    // The browser gives out a half-written day as none at all.
+    if (event.currentTarget.querySelector('input:invalid')) return onFault(HALF_A_DAY);
     const { filter: asked, fault } = readFilter(typedIn(event.currentTarget));
-    onFault(fault);
-    if (fault === null) void navigate({ search: toSearch({ ...asked, after: '' }) });
+    if (fault !== null) return onFault(fault);
+    void navigate({ search: toSearch({ ...asked, after: '' }) });
   };
   const towards = [...TOWARDS, ...parts.map(({ slug, name }) => [slug, name] as const)];
   // Keyed by what is shown, so that the browser's back also turns the sentence back.

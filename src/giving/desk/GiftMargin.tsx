@@ -17,7 +17,11 @@ export function GiftMargin({ gift }: { gift: GiftChain | undefined }) {
       <p className="note">
         The history cannot be altered, by us or by anybody. It holds numbers and sums, never names of givers.
       </p>
-      <p className="note">Words that are passed may be shown. A family is told once, and only after that.</p>
+      <p className="note">
+        Wall words and dedications may be shown once they are passed. A message never is: it is read here and
+        then by the people who build her.
+      </p>
+      <p className="note">A family is told once, and only after its dedication is passed.</p>
     </aside>
   );
 }

@@ -13,6 +13,7 @@ import { GiftBooks } from './GiftBooks.tsx';
 import { GiftFacts } from './GiftFacts.tsx';
 import { GiftLetters } from './GiftLetters.tsx';
 import { GiftMargin } from './GiftMargin.tsx';
+import { isForbidden, isMissing, NoSuchGift, NotForYourRoles } from './GiftRefusal.tsx';
 import { GiftSteps } from './GiftSteps.tsx';
 import { GiftWordings } from './GiftWordings.tsx';
 import { GiftWordsPanel } from './GiftWordsPanel.tsx';
@@ -41,6 +42,8 @@ export function GiftPage() {
   const answer = useQuery(giftChainQuery(api, number));
   const gift = answer.data;
   useHashTarget(gift !== undefined);
+  if (isForbidden(answer.error)) return <NotForYourRoles />;
+  if (isMissing(answer.error)) return <NoSuchGift number={number} />;
   return (
     <>
       <main className="sheet" id="sheet" tabIndex={-1}>

@@ -1,9 +1,10 @@
 // One piece of writing that came with a gift, and the verdict on it.
 import { formatMoment } from '#shared/dates.ts';
 import type { GiftWords, JudgeWords } from '#shared/giving/desk-schemas.ts';
-import { WORDS_KIND_WORDS } from '#shared/giving/desk-words.ts';
+import { WORDS_KIND_HEADS, wordsOfGift } from '#shared/giving/desk-words.ts';
 
 type Props = {
+  giftNumber: number;
   words: GiftWords;
   isNext: boolean;
   isBusy: boolean;
@@ -11,6 +12,9 @@ type Props = {
 };
 
 const WITHHELD = 'Withheld with the name: the treasurer reads these words.';
+const NEVER_SHOWN =
+  'Read at the desk and then by the people who build her. A message is never shown to the public.';
+const MAY_BE_SHOWN = 'May be shown to the public once passed.';
 
 function familyWords(words: GiftWords): string | null {
   if (!words.hasContact) return null;
@@ -34,13 +38,14 @@ function Verdict({ words }: { words: GiftWords }) {
   );
 }
 
-export function GiftWordsItem({ words, isNext, isBusy, onDecide }: Props) {
-  const name = `the words ${WORDS_KIND_WORDS[words.kind]}`;
+export function GiftWordsItem({ giftNumber, words, isNext, isBusy, onDecide }: Props) {
+  const name = `the ${wordsOfGift(words.kind, giftNumber)}`;
   const family = familyWords(words);
   return (
     <li>
-      <p className="ash">{WORDS_KIND_WORDS[words.kind]}</p>
+      <p className="ash">{WORDS_KIND_HEADS[words.kind]}</p>
       {words.words === null ? <p>{WITHHELD}</p> : <blockquote className="said">{words.words}</blockquote>}
+      <p className="small ash">{words.kind === 'message' ? NEVER_SHOWN : MAY_BE_SHOWN}</p>
       {family && <p className="small ash">{family}</p>}
       <p>
         <Verdict words={words} />

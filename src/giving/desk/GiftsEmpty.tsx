@@ -4,7 +4,7 @@ import { Link } from 'react-router-dom';
 export function GiftsEmpty({ hasAnyGift }: { hasAnyGift: boolean }) {
   if (hasAnyGift)
     return (
-      <div className="blank">
+      <div className="blank" data-result tabIndex={-1}>
         <p>No gift is like that. Ask for fewer things at once, or see them all.</p>
         <p className="acts">
           <Link className="act" to="/desk/gifts">
@@ -14,7 +14,7 @@ export function GiftsEmpty({ hasAnyGift }: { hasAnyGift: boolean }) {
       </div>
     );
   return (
-    <div className="blank">
+    <div className="blank" data-result tabIndex={-1}>
       <p>
         No gift has come yet. Every gift by card is written here by itself the moment it is paid, with its
         thanks and its place in the books.

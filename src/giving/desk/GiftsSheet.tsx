@@ -23,7 +23,7 @@ export function GiftsSheet({ filter, answer }: Props) {
   if (list.total.count === 0) return <GiftsEmpty hasAnyGift={list.hasAnyGift && !isPlain(filter)} />;
   return (
     <>
-      <p className="ash sumline" role="status">
+      <p className="ash sumline" role="status" data-result tabIndex={-1}>
         {sumWords(list)}
       </p>
       <GiftTable key={toSearch(filter)} list={list} sort={filter.sort} />

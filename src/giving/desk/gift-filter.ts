@@ -11,7 +11,7 @@ export const toSearch = (filter: GiftFilter): string => {
   return search === '' ? '' : `?${search}`;
 };
 
-/** An address that cannot be read shows the plain list and says why. */
+/** Of an address that cannot be read only the fault counts; the plain filter stands in its form. */
 export function readFilter(params: URLSearchParams): { filter: GiftFilter; fault: string | null } {
   const typed = Object.fromEntries(KEYS.flatMap((key) => (params.has(key) ? [[key, params.get(key)]] : [])));
   const parsed = giftFilterSchema.safeParse(typed);
