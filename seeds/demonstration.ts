@@ -136,7 +136,7 @@ async function giveAll(run: Run): Promise<void> {
       await catchUp(run);
       input.tell(`${index + 1} of ${GIFTS} gifts`);
     }
-    if ((index + 1) % (CATCH_UP_EVERY * 4) === 0) await readWords(run, 0);
+    if ((index + 1) % (CATCH_UP_EVERY * 4) === 0 && index + 1 < GIFTS) await readWords(run, 0);
   }
   await catchUp(run);
   await readWords(run, WORDS_LEFT_UNREAD);

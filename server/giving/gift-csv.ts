@@ -43,7 +43,7 @@ async function listNamesShown(db: Db, numbers: readonly number[]): Promise<Map<n
     nameShownSchema,
     `select g.number, case when ${WITHHELD_SQL} then 'treasurer-only' else g.name_shown end as name_shown
      from gifts g join supporters s on s.id = g.supporter_id where g.number = any(?)`,
-    [numbers],
+    [[...numbers]],
   );
   return new Map(rows.map((row) => [row.number, NAME_SHOWN[row.name_shown]]));
 }

@@ -54,10 +54,22 @@ describe('the CSV', () => {
         '20.00',
         '1234.05',
         '10:00',
-        'on the wall',
+        'not public',
       ]),
     );
     expect(cells).toHaveLength((names.length + 1) * 12);
+  });
+
+  it('says beside each name where it may be shown, and the time by the 24-hour London clock', async () => {
+    const at = new Date('2026-07-03T20:05:00Z');
+    await addGift(desk.db, desk.world, { at, name: 'Hidden Hollis', nameShown: 'treasurer-only' });
+    await addGift(desk.db, desk.world, { at, name: 'Quiet Quillan', nameShown: 'not-public' });
+    const path = '/api/desk/gifts.csv?from=2026-07-03&to=2026-07-03';
+    const forTreasurer = (await desk.as('treasurer').get(path)).text;
+    expect(forTreasurer).toContain('"From whom","Name shown"');
+    expect(forTreasurer).toContain('"2026-07-03","21:05","Hidden Hollis","treasurer only"');
+    expect(forTreasurer).toContain('"21:05","Quiet Quillan","not public"');
+    expect((await desk.as('chair').get(path)).text).toContain('"name withheld","treasurer only"');
   });
 
   it('holds every gift of the filter, not only a page, and leaves an audit line', async () => {

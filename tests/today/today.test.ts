@@ -133,9 +133,13 @@ describe('letters', () => {
     });
     await addGift(app.deps.db, world, { at: ago(2), thanks: 'sent' });
     await addGift(app.deps.db, world, { at: ago(2), thanks: 'soft_failed' });
+    const delayed = await addGift(app.deps.db, world, { at: ago(2), thanks: 'soft_failed' });
+    await app.deps.db('mail_outbox').where({ id: delayed.mailId }).update({ tries: 3 });
     const settled = await addGift(app.deps.db, world, { at: ago(2), thanks: 'hard_failed' });
     const person = await signIn(app, ['secretary']);
     await person.post(`/api/desk/mail/${settled.mailId}/settle`, { decision: 'leave' }).expect(200);
+    expect((await owed('chair')).map((row) => row.id)).toContain(`mail-${delayed.mailId}`);
+    await person.post(`/api/desk/mail/${delayed.mailId}/settle`, { decision: 'leave' }).expect(200);
     const rows = await owed('chair');
     expect(rows.map((row) => [row.id, row.due, row.owedTo])).toEqual([
       [`mail-${failed.mailId}`, 'late', 'Judith Hargreaves'],

@@ -1,15 +1,15 @@
 // Why the filter could not be asked. It takes the focus, and stands where the list would.
 import { useEffect, useRef } from 'react';
 
-export type FilterFault = { words: string };
+/** `tries` grows with each “Show”, so that a second fault of the same words is told again. */
+type Props = { words: string; tries: number };
 
-export function GiftFilterFault({ fault }: { fault: FilterFault }) {
+export function GiftFilterFault({ words, tries }: Props) {
   const said = useRef<HTMLParagraphElement>(null);
-  // Each try makes a fault of its own, so that a second one of the same words is told again.
-  useEffect(() => said.current?.focus(), [fault]);
+  useEffect(() => said.current?.focus(), [words, tries]);
   return (
     <p className="overdue" role="alert" ref={said} tabIndex={-1}>
-      {fault.words} Until then no gifts are shown.
+      {words} Until then no gifts are shown.
     </p>
   );
 }

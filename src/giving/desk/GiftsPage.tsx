@@ -1,11 +1,11 @@
 // The ledger of gifts: a filter that lives in the address bar, days with their sums, and the list as CSV.
-import { useMemo, useState } from 'react';
+import { useState } from 'react';
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { useLocation, useSearchParams } from 'react-router-dom';
 import { useApi } from '#src/lib/use-api.ts';
 import { giftListQuery, giftsCsvPath } from './gift-desk-queries.ts';
 import { readFilter, toSearch } from './gift-filter.ts';
-import { GiftFilterFault, type FilterFault } from './GiftFilterFault.tsx';
+import { GiftFilterFault } from './GiftFilterFault.tsx';
 import { GiftFilterForm } from './GiftFilterForm.tsx';
 import { isForbidden, NotForYourRoles } from './GiftRefusal.tsx';
 import { GiftsMargin } from './GiftsMargin.tsx';
@@ -18,14 +18,13 @@ export function GiftsPage() {
   const { key } = useLocation();
   const { filter, fault } = readFilter(params);
   // A fault belongs to the page it was typed on: whoever goes on or back has left it behind.
-  const [typed, setTyped] = useState<(FilterFault & { on: string }) | null>(null);
-  const addressFault = useMemo(() => (fault === null ? null : { words: fault }), [fault]);
-  const said = typed?.on === key ? typed : addressFault;
+  const [typed, setTyped] = useState({ words: '', on: '', tries: 0 });
+  const said = typed.on === key ? typed.words : fault;
   const answer = useQuery({ ...giftListQuery(api, filter), placeholderData: keepPreviousData });
   useResultFocus(
     toSearch({ ...filter, after: '' }),
     filter.after,
-    !answer.isPending && !answer.isPlaceholderData,
+    said === null && !answer.isPending && !answer.isPlaceholderData,
   );
   if (isForbidden(answer.error)) return <NotForYourRoles />;
   return (
@@ -45,9 +44,13 @@ export function GiftsPage() {
         <GiftFilterForm
           filter={filter}
           parts={answer.data?.parts ?? []}
-          onFault={(words) => setTyped({ words, on: key })}
+          onFault={(words) => setTyped({ words, on: key, tries: typed.tries + 1 })}
         />
-        {said === null ? <GiftsSheet filter={filter} answer={answer} /> : <GiftFilterFault fault={said} />}
+        {said === null ? (
+          <GiftsSheet filter={filter} answer={answer} />
+        ) : (
+          <GiftFilterFault words={said} tries={typed.tries} />
+        )}
       </main>
       <GiftsMargin history={answer.data?.history ?? []} />
     </>
