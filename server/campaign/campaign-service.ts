@@ -37,7 +37,7 @@ export async function publishCampaign(trx: Trx, campaignId: string, deed: Deed):
 
 /** Where choosing a part makes a fund of its own, each part that can be chosen must have one. */
 async function refusePartsWithoutFund(trx: Trx, campaignId: string): Promise<void> {
-  const needsFunds = await trx('appeal_wordings')
+  const needsFunds: unknown = await trx('appeal_wordings')
     .where({ campaign_id: campaignId, part_choice: 'fund' })
     .first('id');
   if (needsFunds === undefined) return;
