@@ -2,6 +2,7 @@
 import { generate } from 'otplib';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { DEMONSTRATION_PEOPLE } from '#seeds/demonstration-people.ts';
+import { createAccount } from '#server/accounts/index.ts';
 import { givingTasks } from '#server/giving/index.ts';
 import {
   expectAccessible,
@@ -94,4 +95,25 @@ test('the desk with nothing in it says what goes there', async () => {
   await expectAccessibleNarrow(page);
   await page.goto('/desk/gifts/999999', { waitUntil: 'networkidle' });
   await expectAccessibleNarrow(page);
+});
+
+test('a new treasurer must set up a second factor before anything opens', async () => {
+  const newcomer = {
+    name: 'Isolde Wherry',
+    email: 'isolde.wherry@brackenhythe.example',
+    password: 'a-lamp-for-every-night',
+  };
+  await stage.app.deps.db.transaction((trx) =>
+    createAccount(trx, { ...newcomer, roles: ['treasurer'], createdAt: new Date() }),
+  );
+  const { page } = await stage.visitor(WIDE);
+  await page.goto('/desk/sign-in', { waitUntil: 'networkidle' });
+  await page.getByLabel('E-mail address', { exact: true }).fill(newcomer.email);
+  await page.getByLabel('Password', { exact: true }).fill(newcomer.password);
+  await page.getByRole('button', { name: 'Open the desk' }).click();
+  await page.waitForURL('**/desk/second-factor/set-up**');
+  await page.getByRole('heading', { level: 1 }).waitFor();
+  await expectAccessible(page);
+  await expectAccessibleNarrow(page);
+  expect((await page.request.get('/api/desk/gifts')).status()).toBe(403);
 });
