@@ -10,6 +10,7 @@ import {
   StaticRouterProvider,
   type StaticHandlerContext,
 } from 'react-router-dom';
+import { escapeHtml } from '#shared/html-text.ts';
 import type { Society } from '#shared/society/society-schemas.ts';
 import { faultTitle } from './app/FaultPage.tsx';
 import { createRoutes } from './app/router.tsx';
@@ -41,9 +42,6 @@ async function drawWhole(page: ReactNode): Promise<string> {
   await drawn;
   return text(out);
 }
-
-const escapeHtml = (words: string): string =>
-  words.replaceAll('&', '&amp;').replaceAll('<', '&lt;').replaceAll('"', '&quot;');
 
 function headOf(context: StaticHandlerContext, queryClient: QueryClient, errors: unknown[]): string {
   const society = queryClient.getQueryData<Society>(SOCIETY_KEY);

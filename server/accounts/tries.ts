@@ -1,11 +1,12 @@
 // Slows guessing down: after a few free tries each further one makes the next wait longer. Nobody is locked out for good.
 import { createHash } from 'node:crypto';
 import { isIPv6 } from 'node:net';
-import { RateLimiterMemory, RateLimiterPostgres, RateLimiterRes } from 'rate-limiter-flexible';
+import { RateLimiterRes } from 'rate-limiter-flexible';
 import type { Db } from '#server/platform/db.ts';
 import { TooMany } from '#server/platform/errors.ts';
+import { createLimiter } from '#server/platform/limits.ts';
 
-const REMEMBERED_SECONDS = 60 * 60;
+const remembered = { perSeconds: 60 * 60 };
 
 export type Tries = {
   /** Counts one try before it is made. @throws TooMany while a wait is running. */
@@ -23,23 +24,12 @@ const waitAfter = ({ free, longestWaitSeconds }: Rule, count: number): number =>
 /** Addresses and e-mails are counted by their digest: the table needs no list of who tried. */
 const digest = (key: string): string => createHash('sha256').update(key).digest('base64url');
 
-function limiter(db: Db, keyPrefix: string, points: number) {
-  const options = { keyPrefix, points, duration: REMEMBERED_SECONDS };
-  return new RateLimiterPostgres({
-    ...options,
-    storeClient: db,
-    storeType: 'knex',
-    tableName: 'rate_limit',
-    tableCreated: true,
-    clearExpiredByTimeout: false,
-    // While the table is away, each process still counts for itself.
-    insuranceLimiter: new RateLimiterMemory(options),
-  });
-}
-
 export function createTries(db: Db, rule: Rule): Tries {
-  const counts = limiter(db, `${rule.name}-count`, Number.MAX_SAFE_INTEGER);
-  const waits = limiter(db, `${rule.name}-wait`, 1);
+  const counts = createLimiter(
+    { db },
+    { ...remembered, name: `${rule.name}-count`, points: Number.MAX_SAFE_INTEGER },
+  );
+  const waits = createLimiter({ db }, { ...remembered, name: `${rule.name}-wait`, points: 1 });
   return {
     async take(key) {
       const name = digest(key);

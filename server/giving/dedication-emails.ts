@@ -1,4 +1,5 @@
 // Tells one family contact of a gift in memory or in honour of somebody, after a person has read the words.
+import { inSentence } from '#shared/campaign/name-rules.ts';
 import { formatPence, type Pence } from '#shared/money.ts';
 import type { Trx } from '#server/platform/db.ts';
 import { queueMail, renderLetter } from '#server/platform/mail/index.ts';
@@ -6,7 +7,6 @@ import {
   dedicationPhrase,
   greetingLine,
   imprintValues,
-  midSentence,
   paragraphs,
   plainImprint,
   plainLetter,
@@ -29,7 +29,7 @@ function newsParagraphs(news: DedicationNews): string[] {
   const phrase = dedicationPhrase({ kind: news.kind, name: news.honouredName });
   const giver = news.giverName ?? 'Somebody who would rather not be named';
   return [
-    `${giver} has made a gift${phrase} to ${midSentence(news.campaignName)}, which ${news.society.societyName} is building.`,
+    `${giver} has made a gift${phrase} to ${inSentence(news.campaignName)}, which ${news.society.societyName} is building.`,
     ...(news.sumPence === null ? [] : [`The gift was ${formatPence(news.sumPence)}.`]),
     'The giver asked us to tell you. There is nothing that you need to do.',
     `We were given your name and your address for this letter, and use them for nothing else. If you have a question, answer this letter, or write to us or telephone: ${news.society.contact}.`,

@@ -1,4 +1,5 @@
 // The thank-you that every giver gets: what was given, towards what, and what was declared, in full.
+import { inSentence } from '#shared/campaign/name-rules.ts';
 import type { Receipt } from '#shared/giving/give-schemas.ts';
 import { formatPence } from '#shared/money.ts';
 import type { Trx } from '#server/platform/db.ts';
@@ -7,7 +8,6 @@ import {
   dedicationPhrase,
   greetingLine,
   imprintValues,
-  midSentence,
   paragraphs,
   plainImprint,
   plainLetter,
@@ -47,7 +47,7 @@ const givenLines = (receipt: Receipt): string =>
   receipt.shares.map((one) => `Towards: ${one.name}, ${formatPence(one.amountPence)}`).join('\n');
 
 function opening(receipt: Receipt): string {
-  const gave = `You gave ${formatPence(receipt.sumPence)} to ${midSentence(receipt.campaignName)} on ${receipt.givenOn}.`;
+  const gave = `You gave ${formatPence(receipt.sumPence)} to ${inSentence(receipt.campaignName)} on ${receipt.givenOn}.`;
   return receipt.dedication?.kind === 'memory'
     ? `${gave} We will use it with care.`
     : `${gave} One peg is nothing; hundreds hold up the whole frame. Thank you for yours.`;
@@ -85,14 +85,14 @@ const receiptNote = (receipt: Receipt): string =>
 
 /** A letter about a gift in memory asks for nothing and points at nothing else. */
 const lookNote = (receipt: Receipt): string | null =>
-  receipt.dedication?.kind === 'memory' ? null : `How ${midSentence(receipt.campaignName)} stands today:`;
+  receipt.dedication?.kind === 'memory' ? null : `How ${inSentence(receipt.campaignName)} stands today:`;
 
 export async function thanksLetter(
   receipt: Receipt,
   { receiptUrl, siteUrl }: LetterAddresses,
 ): Promise<WrittenLetter> {
   const phrase = dedicationPhrase(receipt.dedication);
-  const subject = `Thank you for your gift${phrase || ` to ${midSentence(receipt.campaignName)}`}`;
+  const subject = `Thank you for your gift${phrase || ` to ${inSentence(receipt.campaignName)}`}`;
   const thanks = `Thank you for your gift${phrase}.`;
   const greeting = greetingLine(receipt.greeting, receipt.name);
   const notes = [receipt.splitNote, wallNote(receipt)].filter((note) => note !== null);

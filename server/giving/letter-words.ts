@@ -7,10 +7,6 @@ export function greetingLine(greeting: string, name: string): string {
   return /^(dear|hello|hi|good (morning|day|evening))\b/i.test(wish) ? `${wish},` : `Dear ${wish},`;
 }
 
-/** “The Lampwoman” in the middle of a sentence: “the Lampwoman”. */
-export const midSentence = (name: string): string =>
-  name.replace(/^(The|A|An) /, (word) => word.toLowerCase());
-
 export type Dedication = { kind: 'memory' | 'honour'; name: string };
 
 /** “ in memory of Walter Quillan”, or nothing. */

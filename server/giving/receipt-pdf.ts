@@ -1,8 +1,9 @@
 // The receipt as a tagged PDF: it can be read aloud, printed on A4, and spells every name.
+import { inSentence } from '#shared/campaign/name-rules.ts';
 import PDFDocument from 'pdfkit';
 import type { Receipt } from '#shared/giving/give-schemas.ts';
 import { formatPence } from '#shared/money.ts';
-import { dedicationPhrase, midSentence } from './letter-words.ts';
+import { dedicationPhrase } from './letter-words.ts';
 import {
   addLedger,
   addRule,
@@ -33,7 +34,7 @@ function addGift(doc: Doc, root: Element, receipt: Receipt): void {
   addText(doc, root, 'P', receipt.societyName, { weight: 'bold', size: 12, after: 8 });
   addRule(doc, { colour: LAMP, weight: 3, after: 26 });
   addText(doc, root, 'H1', `Receipt ${receipt.number}`, { weight: 'bold', size: 26, after: 10 });
-  const given = `${receipt.name} gave ${formatPence(receipt.sumPence)} to ${midSentence(receipt.campaignName)} on ${receipt.givenOn}`;
+  const given = `${receipt.name} gave ${formatPence(receipt.sumPence)} to ${inSentence(receipt.campaignName)} on ${receipt.givenOn}`;
   const phrase = dedicationPhrase(receipt.dedication);
   addText(doc, root, 'P', phrase ? `${given},${phrase}.` : `${given}.`, { size: 13, after: 18 });
   addLedger(doc, root, ledgerRows(receipt));

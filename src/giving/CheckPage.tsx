@@ -9,7 +9,7 @@ import { Trouble } from '#src/ui/Trouble.tsx';
 import { CheckAnswers } from './CheckAnswers.tsx';
 import type { PressTrouble } from './give-actions.ts';
 import type { CheckPageData } from './give-loaders.ts';
-import { inSentence } from './give-words.ts';
+import { inSentence } from '#shared/campaign/name-rules.ts';
 import { useTroubleTitle } from './use-trouble-title.ts';
 
 const CHECK_ID = 'give-check';

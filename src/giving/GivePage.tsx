@@ -1,4 +1,5 @@
 // The one sheet on which a gift is made.
+import { inSentence } from '#shared/campaign/name-rules.ts';
 import { useEffect } from 'react';
 import { useActionData, useLoaderData, useLocation } from 'react-router-dom';
 import { ErrorSummary, faultsHeading } from '#src/ui/ErrorSummary.tsx';
@@ -12,7 +13,7 @@ import { DetailsRow } from './DetailsRow.tsx';
 import { GiftAidRow } from './GiftAidRow.tsx';
 import type { PressTrouble, SheetTrouble } from './give-actions.ts';
 import type { GivePageData } from './give-loaders.ts';
-import { GIVE_LABELS, inSentence } from './give-words.ts';
+import { GIVE_LABELS } from './give-words.ts';
 import { TowardsRow } from './TowardsRow.tsx';
 import { SHEET_ID, useGiveForm, type SheetControls } from './use-give-form.ts';
 import { useTroubleTitle } from './use-trouble-title.ts';

@@ -3,7 +3,7 @@ import { Link } from 'react-router-dom';
 import type { GiveOutcome } from '#shared/giving/give-schemas.ts';
 import { formatPence } from '#shared/money.ts';
 import { AnswerRow } from '#src/ui/AnswerRow.tsx';
-import { inSentence } from './give-words.ts';
+import { inSentence } from '#shared/campaign/name-rules.ts';
 import { SharesList } from './SharesList.tsx';
 
 function thanksWords({ sumPence, inMemory, campaignName }: GiveOutcome): string {

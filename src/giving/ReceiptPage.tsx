@@ -5,7 +5,7 @@ import { formatPence } from '#shared/money.ts';
 import { AnswerRow } from '#src/ui/AnswerRow.tsx';
 import { useHydrated } from '#src/ui/use-hydrated.ts';
 import type { ReceiptPageData } from './give-loaders.ts';
-import { inSentence } from './give-words.ts';
+import { inSentence } from '#shared/campaign/name-rules.ts';
 import { SharesList } from './SharesList.tsx';
 
 function ReceiptAnswers({ receipt }: { receipt: Receipt }) {

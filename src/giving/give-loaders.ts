@@ -1,4 +1,5 @@
 // What each giving page needs before it is drawn, with its title.
+import { inSentence } from '#shared/campaign/name-rules.ts';
 import { redirect } from 'react-router-dom';
 import { formatPence } from '#shared/money.ts';
 import { fieldFaults, type FieldFaults } from '#shared/errors.ts';
@@ -8,7 +9,7 @@ import { nothingHere } from '#src/lib/page-fault.ts';
 import { faultsHeading } from '#src/ui/ErrorSummary.tsx';
 import { backToSheet, payTroubleOf, takeTroubleTitle } from './give-actions.ts';
 import { giveCheckQuery, giveOutcomeQuery, giveSheetQuery, receiptQuery } from './give-queries.ts';
-import { atStart, inSentence } from './give-words.ts';
+import { atStart } from './give-words.ts';
 
 /** The faults of a draft as it was kept, by the rules that also judge the press. */
 function faultsOf(sheet: GiveSheet): FieldFaults {

@@ -33,10 +33,6 @@ export const GIVE_LABELS: Record<GiveField, string> = {
   byPhone: 'By telephone or text',
 };
 
-const ARTICLE = /^the\s+/i;
-/** “the Lampwoman” inside a sentence, however the campaign's name begins. */
-export const inSentence = (name: string): string =>
-  ARTICLE.test(name) ? name.replace(ARTICLE, 'the ') : name;
 export const atStart = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
 
 const SUBJECTS: Record<string, string> = { her: 'she', him: 'he', them: 'they', it: 'it' };

@@ -3,7 +3,7 @@ export { queueMail, type MailToQueue } from './outbox.ts';
 export { sendDueMail, type MailDeps, type SendingInput, type SendingTally } from './send-due-mail.ts';
 export { mailTasks } from './mail-tasks.ts';
 export { settleMail, type MailDecision, type SettledMail } from './settle.ts';
-export { findMailText, listMailAbout, listOwedMail, type MailLine } from './reads.ts';
+export { listMailAbout, listOwedMail, type MailLine } from './reads.ts';
 export { countDueMail, MAIL_STATES, mailStateSchema, type MailState } from './outbox-store.ts';
 export { isPlainAddress } from './plain-address.ts';
 export { renderLetter, type LetterParts } from './render-letter.ts';

@@ -1,11 +1,8 @@
 // Builds pieces of a letter's HTML in which people's words can only ever be words.
+import { escapeHtml } from '#shared/html-text.ts';
 
 /** HTML that was built here, with every value in it escaped. */
 export type SafeHtml = { readonly safeHtml: string };
-
-const SIGNS: Record<string, string> = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' };
-
-export const escapeHtml = (text: string): string => text.replaceAll(/[&<>"']/g, (sign) => SIGNS[sign] ?? '');
 
 type Value = string | SafeHtml | readonly SafeHtml[];
 
@@ -24,8 +21,5 @@ export function html(pieces: TemplateStringsArray, ...values: Value[]): SafeHtml
       .join(''),
   };
 }
-
-/** Nothing, for a piece that is left out. */
-export const NO_HTML: SafeHtml = { safeHtml: '' };
 
 export const toHtml = (value: Value): string => fill(value);

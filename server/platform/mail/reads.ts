@@ -75,11 +75,3 @@ export const listMailAbout = (db: Db, subjectKind: string, subjectId: string): P
     `select ${COLUMNS} from mail_outbox where subject_kind = ? and subject_id = ? order by created_at, id`,
     [subjectKind, subjectId],
   );
-
-const mailTextSchema = z.object({ html: z.string(), plain: z.string() });
-
-/** The letter's own words, exactly as they went out or will. */
-export async function findMailText(db: Db, id: string): Promise<z.output<typeof mailTextSchema> | undefined> {
-  const [row] = await queryRows(db, mailTextSchema, `select html, plain from mail_outbox where id = ?`, [id]);
-  return row;
-}

@@ -1,4 +1,5 @@
 // Puts a drawn page into the built template.
+import { escapeHtml } from '#shared/html-text.ts';
 import type { RenderedPage } from './site-build.ts';
 
 // A function as replacement: a `$` in the text would be read as a pattern otherwise.
@@ -17,8 +18,6 @@ export const DESK_SHELL = {
   html: '<noscript><p>The desk works in the browser and needs JavaScript. Every public page works without.</p></noscript>',
   state: 'null',
 };
-
-const escapeHtml = (words: string): string => words.replaceAll('&', '&amp;').replaceAll('<', '&lt;');
 
 /** For when the page cannot be drawn at all; it needs nothing else. */
 export const barePage = (title: string, words: string, requestId: string | undefined): string =>
